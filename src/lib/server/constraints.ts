@@ -1,0 +1,67 @@
+import { DatabaseError } from 'sequelize';
+import { Conflict } from './errors';
+
+/** Database constraints a person can run into, in words. The database decides; this only explains. */
+const WORDS: Record<string, [code: string, message: string]> = {
+	person_email_key: ['email-taken', 'Somebody with this mail address is a member already.'],
+	invitation_open_key: [
+		'already-invited',
+		'This address has an open invitation. Withdraw it first.'
+	],
+	project_name_key: ['name-taken', 'A project of this name exists.'],
+	protocol_number_key: ['name-taken', 'A protocol of this number exists.'],
+	arena_name_key: ['name-taken', 'An arena of this name exists.'],
+	rig_name_key: ['name-taken', 'A rig of this name exists.'],
+	drive_design_name_key: ['name-taken', 'A drive design of this name exists.'],
+	drive_serial_key: ['serial-taken', 'A drive of this design and serial exists.'],
+	animal_code_key: [
+		'code-taken',
+		'An animal of this code exists. Codes are used once, also after the end.'
+	],
+	animal_protocol_one_at_a_time: [
+		'protocol-overlap',
+		'The animal is on another protocol on some of these days. End that membership first.'
+	],
+	implant_letter_key: ['letter-taken', 'The animal has an implant of this letter.'],
+	implant_drive_key: ['drive-in-use', 'This drive is in another implant.'],
+	bundle_role_one_at_a_time: ['role-overlap', 'The bundle has another role on some of these days.'],
+	epoch_no_overlap: ['epoch-overlap', 'Two epochs of a session cannot overlap in time.'],
+	turn_within_travel: [
+		'beyond-travel',
+		'This would put the screw outside its travel at some moment. Nothing was recorded.'
+	],
+	turn_replaces_same_carriage: [
+		'wrong-carriage',
+		'A correction replaces a turn of the same carriage.'
+	],
+	turn_replaces_id_key: [
+		'already-corrected',
+		'This turn was corrected already. Correct the newer row.'
+	],
+	tally_once_key: [
+		'already-counted',
+		'This bundle has a count of this kind on this day. Withdraw it first.'
+	],
+	data_file_position_key: [
+		'position-present',
+		'The session has positions already. Withdraw them first.'
+	],
+	day_goes_forward: ['day-signed', 'The day is signed. What came later is added as an amendment.'],
+	analysis_immutable: [
+		'analysis-final',
+		'A finished analysis is kept as computed. Ask for a new one.'
+	]
+};
+
+function constraintOf(fault: unknown): string | undefined {
+	if (typeof fault !== 'object' || fault === null) return undefined;
+	if ('constraint' in fault && typeof fault.constraint === 'string') return fault.constraint;
+	return undefined;
+}
+
+/** The refusal that a constraint's violation means, or undefined when it is a bug of ours. */
+export function explainConstraint(fault: DatabaseError | Error): Conflict | undefined {
+	const name = constraintOf(fault) ?? ('parent' in fault ? constraintOf(fault.parent) : undefined);
+	const words = name === undefined ? undefined : WORDS[name];
+	return words && new Conflict(words[0], words[1], { cause: fault });
+}

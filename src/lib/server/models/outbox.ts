@@ -1,0 +1,47 @@
+import {
+	DataTypes,
+	Model,
+	type CreationOptional,
+	type InferAttributes,
+	type InferCreationAttributes,
+	type Sequelize
+} from 'sequelize';
+import { v7 as uuidv7 } from 'uuid';
+
+/** A mail to send, sent, or given up. */
+export class Outbox extends Model<InferAttributes<Outbox>, InferCreationAttributes<Outbox>> {
+	declare id: CreationOptional<string>;
+	declare dedupeKey: string;
+	declare kind: string;
+	declare toEmail: string;
+	declare toPersonId: CreationOptional<string | null>;
+	declare subject: string;
+	declare bodyText: string;
+	declare createdAt: CreationOptional<Date>;
+	declare attempts: CreationOptional<number>;
+	declare lastAttemptAt: CreationOptional<Date | null>;
+	declare lastError: CreationOptional<string | null>;
+	declare sentAt: CreationOptional<Date | null>;
+	declare deadAt: CreationOptional<Date | null>;
+
+	static define(sequelize: Sequelize): void {
+		Outbox.init(
+			{
+				id: { type: DataTypes.UUID, primaryKey: true, defaultValue: () => uuidv7() },
+				dedupeKey: { type: DataTypes.TEXT, allowNull: false },
+				kind: { type: DataTypes.TEXT, allowNull: false },
+				toEmail: { type: DataTypes.TEXT, allowNull: false },
+				toPersonId: DataTypes.UUID,
+				subject: { type: DataTypes.TEXT, allowNull: false },
+				bodyText: { type: DataTypes.TEXT, allowNull: false },
+				createdAt: DataTypes.DATE,
+				attempts: DataTypes.INTEGER,
+				lastAttemptAt: DataTypes.DATE,
+				lastError: DataTypes.TEXT,
+				sentAt: DataTypes.DATE,
+				deadAt: DataTypes.DATE
+			},
+			{ sequelize, tableName: 'outbox' }
+		);
+	}
+}
