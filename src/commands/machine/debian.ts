@@ -1,0 +1,92 @@
+import { spawn } from 'node:child_process';
+import { accessSync, constants } from 'node:fs';
+import { delimiter, join } from 'node:path';
+import { Refusal } from '../bootstrap/refusal.mjs';
+import { say } from './say';
+
+const APT = ['-y', '--no-install-recommends', '-o', 'DPkg::Lock::Timeout=600'];
+
+export interface DebianPackage {
+	name: string;
+	/** What it is for, to complete "needs … for". */
+	purpose: string;
+	/** Runs as root before the package is unpacked. */
+	prepare?: string;
+}
+
+/**
+ * Debian makes and starts a cluster of its own when the server package arrives.
+ * It would take memory and the standard port, and nobody here would use it.
+ */
+export const POSTGRES: DebianPackage = {
+	name: 'postgresql',
+	purpose: 'the database',
+	prepare:
+		'mkdir -p /etc/postgresql-common && { test -e /etc/postgresql-common/createcluster.conf || echo "create_main_cluster = false" > /etc/postgresql-common/createcluster.conf; }'
+};
+
+export const CHROMIUM: DebianPackage = { name: 'chromium', purpose: 'the browser tests' };
+
+/** Installs a Debian package, or refuses with the line a person has to run. */
+export async function installPackage(wanted: DebianPackage): Promise<void> {
+	const script = [wanted.prepare, aptLine('update'), aptLine(`install ${wanted.name}`)]
+		.filter(Boolean)
+		.join(' && ');
+	if (!findProgram('apt-get')) {
+		throw new Refusal(
+			`Quarterturn needs ${wanted.name} for ${wanted.purpose}, and this system has no apt-get. Nothing was changed. Install it with the system's own means, then start again.`
+		);
+	}
+	const asRoot = process.getuid?.() === 0 ? [] : ['sudo', '-n'];
+	if (asRoot.length > 0 && !(await mayUseSudo())) {
+		throw new Refusal(
+			`Quarterturn needs Debian's package ${wanted.name} for ${wanted.purpose}. Nothing was changed. Run this once, then start again:\n\n    sudo sh -c '${script}'\n`
+		);
+	}
+	say(`Installing Debian's package ${wanted.name} for ${wanted.purpose} …`);
+	const { code, output } = await runQuietly([...asRoot, 'sh', '-c', script]);
+	if (code !== 0) {
+		throw new Refusal(
+			`Installing ${wanted.name} failed. What apt-get said last:\n\n${output.trim().split('\n').slice(-8).join('\n')}\n\nNothing of the lab was changed. Mend that, then start again.`
+		);
+	}
+}
+
+function aptLine(words: string): string {
+	const [verb, ...rest] = words.split(' ');
+	return ['DEBIAN_FRONTEND=noninteractive', 'apt-get', ...APT, '-q', verb, ...rest].join(' ');
+}
+
+async function mayUseSudo(): Promise<boolean> {
+	return Boolean(findProgram('sudo')) && (await runQuietly(['sudo', '-n', 'true'])).code === 0;
+}
+
+function runQuietly([command, ...args]: string[]): Promise<{
+	code: number | null;
+	output: string;
+}> {
+	return new Promise((resolve, reject) => {
+		const child = spawn(command, args, { stdio: ['ignore', 'pipe', 'pipe'] });
+		let output = '';
+		const keep = (chunk: Buffer) => (output = (output + chunk).slice(-20_000));
+		child.stdout.on('data', keep);
+		child.stderr.on('data', keep);
+		child.on('error', reject);
+		child.on('close', (code) => resolve({ code, output }));
+	});
+}
+
+/** The full path of a program, also where a person's PATH leaves out the system folders. */
+export function findProgram(name: string): string | undefined {
+	const folders = [...(process.env.PATH ?? '').split(delimiter), '/usr/sbin', '/sbin', '/usr/bin'];
+	return folders.map((folder) => join(folder, name)).find(isExecutable);
+}
+
+export function isExecutable(file: string): boolean {
+	try {
+		accessSync(file, constants.X_OK);
+		return true;
+	} catch {
+		return false;
+	}
+}
