@@ -1,4 +1,3 @@
-import { chmodSync, mkdirSync } from 'node:fs';
 import type { Home } from '../home/home';
 import { secretsOf } from '../home/secrets';
 import { clusterMajor, dataFolder, ensureData, SUPERUSER } from './data-folder';

@@ -4,6 +4,16 @@ import { afterAll, inject } from 'vitest';
 import { createDatabase, withClient } from '../../../src/commands/cluster/roles';
 import { TEMPLATE } from './template';
 
+const OUTSIDE = [
+	'SMTP_URL',
+	'ORIGIN',
+	'PORT',
+	'LAB_TIME_ZONE',
+	'DEMO',
+	'UPLOAD_LIMIT_MB',
+	'WORKERS'
+];
+
 /** A fresh copy of the migrated database for each test file, one name per vitest worker. */
 const name = `w_${process.env.VITEST_POOL_ID ?? '1'}`;
 
@@ -22,14 +32,13 @@ await withClient(inject('superUrl'), async (client) => {
 	await createDatabase(client, name, TEMPLATE);
 });
 
-for (const outside of ['SMTP_URL', 'ORIGIN', 'PORT', 'LAB_TIME_ZONE', 'DEMO', 'UPLOAD_LIMIT_MB']) {
-	delete process.env[outside];
-}
 Object.assign(process.env, {
 	DATABASE_URL: inDatabase(inject('appUrl')),
 	DATABASE_OWNER_URL: inDatabase(inject('ownerUrl')),
 	QUARTERTURN_HOME: home,
 	STORAGE_URL: join(home, 'uploads'),
+	// An empty setting counts as not set: a person's own environment must not reach the tests.
+	...Object.fromEntries(OUTSIDE.map((setting) => [setting, ''])),
 	SECRET_KEY: 'only-for-tests-0123456789abcdef'
 });
 
