@@ -21,5 +21,7 @@ export function formatQuantity(count: number, one: string, many = `${one}s`): st
 
 /** A share from 0 to 1 as "91 %". */
 export function formatShare(share: number | null, decimals = 0): string {
-	return share === null || Number.isNaN(share) ? absent : `${formatNumber(share * 100, decimals)} %`;
+	return share === null || Number.isNaN(share)
+		? absent
+		: `${formatNumber(share * 100, decimals)} %`;
 }
