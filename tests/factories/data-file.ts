@@ -9,11 +9,13 @@ import { makeSession } from './session';
 export async function makeDataFile(
 	fields: Partial<CreationAttributes<DataFile>> = {}
 ): Promise<DataFile> {
+	const digest = createHash('sha256').update(`file ${nextNumber()}`).digest('hex');
 	return DataFile.create({
 		sessionId: fields.sessionId ?? (await makeSession()).id,
 		uploadedBy: fields.uploadedBy ?? (await makePerson()).id,
 		kind: 'position',
-		sha256: createHash('sha256').update(`file ${nextNumber()}`).digest('hex'),
+		sha256: digest,
+		parsedSha256: fields.state === 'taken-in' ? digest : null,
 		bytes: 100,
 		originalName: 'position.csv',
 		format: 'csv',

@@ -26,6 +26,8 @@ const WORDS: Record<string, [code: string, message: string]> = {
 	implant_drive_key: ['drive-in-use', 'This drive is in another implant.'],
 	bundle_role_one_at_a_time: ['role-overlap', 'The bundle has another role on some of these days.'],
 	epoch_no_overlap: ['epoch-overlap', 'Two epochs of a session cannot overlap in time.'],
+	epoch_name_key: ['epoch-name-taken', 'Two epochs of a session cannot share a name.'],
+	epoch_run_has_arena: ['epoch-needs-arena', 'A run epoch needs its arena.'],
 	turn_within_travel: [
 		'beyond-travel',
 		'This would put the screw outside its travel at some moment. Nothing was recorded.'

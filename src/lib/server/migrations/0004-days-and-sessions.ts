@@ -74,6 +74,8 @@ CREATE TABLE session (
 	day_id uuid NOT NULL REFERENCES day,
 	starts_at timestamptz NOT NULL,
 	clock_zero_at timestamptz NOT NULL,
+	-- Where it ran unless an epoch says otherwise; a session without epochs is analysed in it.
+	arena_id uuid REFERENCES arena,
 	rig_id uuid REFERENCES rig,
 	reference text NOT NULL DEFAULT '',
 	ground text NOT NULL DEFAULT '',
@@ -101,13 +103,17 @@ CREATE TABLE epoch (
 	stop_s numeric(14,6) NOT NULL,
 	arena_id uuid REFERENCES arena,
 	configuration text NOT NULL DEFAULT '',
+	withdrawn_at timestamptz,
+	withdrawn_by uuid REFERENCES person,
+	withdrawn_why text,
+	CHECK ((withdrawn_at IS NULL) = (withdrawn_why IS NULL)),
 	CHECK (stop_s > start_s),
 	CONSTRAINT epoch_run_has_arena CHECK (kind <> 'run' OR arena_id IS NOT NULL),
-	UNIQUE (session_id, name),
 	CONSTRAINT epoch_no_overlap EXCLUDE USING gist (
 		session_id WITH =, numrange(start_s, stop_s, '[)') WITH &&
-	)
+	) WHERE (withdrawn_at IS NULL)
 );
+CREATE UNIQUE INDEX epoch_name_key ON epoch (session_id, lower(name)) WHERE withdrawn_at IS NULL;
 
 CREATE TABLE tally (
 	id uuid PRIMARY KEY,

@@ -19,8 +19,9 @@ CREATE TABLE data_file (
 	columns text[],
 	warnings jsonb NOT NULL DEFAULT '[]',
 	refusal jsonb,
-	-- Positions as little-endian float64 (t, x, y in turn); spikes live with their units.
-	parsed bytea,
+	-- Positions as little-endian float64 (all t, all x, all y), kept in storage: a long track
+	-- would not pass through a row without filling memory. Spikes live with their units.
+	parsed_sha256 text CHECK (parsed_sha256 ~ '^[0-9a-f]{64}$'),
 	uploaded_by uuid NOT NULL REFERENCES person,
 	uploaded_at timestamptz NOT NULL DEFAULT now(),
 	withdrawn_at timestamptz,
@@ -28,9 +29,9 @@ CREATE TABLE data_file (
 	withdrawn_why text,
 	CHECK ((withdrawn_at IS NULL) = (withdrawn_why IS NULL)),
 	CHECK ((state = 'refused') = (refusal IS NOT NULL)),
-	CHECK (state <> 'taken-in' OR row_count IS NOT NULL)
+	CHECK (state <> 'taken-in' OR row_count IS NOT NULL),
+	CHECK (state <> 'taken-in' OR kind <> 'position' OR parsed_sha256 IS NOT NULL)
 );
-ALTER TABLE data_file ALTER COLUMN parsed SET STORAGE EXTERNAL;
 CREATE INDEX data_file_session_idx ON data_file (session_id, kind, uploaded_at);
 CREATE INDEX data_file_sha256_idx ON data_file (sha256);
 -- One position track is in force for a session.

@@ -25,7 +25,7 @@ export class DataFile extends Model<InferAttributes<DataFile>, InferCreationAttr
 	declare columns: CreationOptional<string[] | null>;
 	declare warnings: CreationOptional<string[]>;
 	declare refusal: CreationOptional<DataRefusal | null>;
-	declare parsed: CreationOptional<Buffer | null>;
+	declare parsedSha256: CreationOptional<string | null>;
 	declare uploadedBy: string;
 	declare uploadedAt: CreationOptional<Date>;
 	declare withdrawnAt: CreationOptional<Date | null>;
@@ -48,7 +48,7 @@ export class DataFile extends Model<InferAttributes<DataFile>, InferCreationAttr
 				columns: DataTypes.ARRAY(DataTypes.TEXT),
 				warnings: DataTypes.JSONB,
 				refusal: DataTypes.JSONB,
-				parsed: DataTypes.BLOB,
+				parsedSha256: DataTypes.TEXT,
 				uploadedBy: { type: DataTypes.UUID, allowNull: false },
 				uploadedAt: DataTypes.DATE,
 				withdrawnAt: DataTypes.DATE,

@@ -19,6 +19,9 @@ export class Epoch extends Model<InferAttributes<Epoch>, InferCreationAttributes
 	declare stopS: number;
 	declare arenaId: CreationOptional<string | null>;
 	declare configuration: CreationOptional<string>;
+	declare withdrawnAt: CreationOptional<Date | null>;
+	declare withdrawnBy: CreationOptional<string | null>;
+	declare withdrawnWhy: CreationOptional<string | null>;
 
 	static define(sequelize: Sequelize): void {
 		Epoch.init(
@@ -30,7 +33,10 @@ export class Epoch extends Model<InferAttributes<Epoch>, InferCreationAttributes
 				startS: { type: DataTypes.DECIMAL, allowNull: false },
 				stopS: { type: DataTypes.DECIMAL, allowNull: false },
 				arenaId: DataTypes.UUID,
-				configuration: DataTypes.TEXT
+				configuration: DataTypes.TEXT,
+				withdrawnAt: DataTypes.DATE,
+				withdrawnBy: DataTypes.UUID,
+				withdrawnWhy: DataTypes.TEXT
 			},
 			{ sequelize, tableName: 'epoch' }
 		);

@@ -15,6 +15,7 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
 	declare dayId: string;
 	declare startsAt: Date;
 	declare clockZeroAt: Date;
+	declare arenaId: CreationOptional<string | null>;
 	declare rigId: CreationOptional<string | null>;
 	declare reference: CreationOptional<string>;
 	declare ground: CreationOptional<string>;
@@ -38,6 +39,7 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
 				dayId: { type: DataTypes.UUID, allowNull: false },
 				startsAt: { type: DataTypes.DATE, allowNull: false },
 				clockZeroAt: { type: DataTypes.DATE, allowNull: false },
+				arenaId: DataTypes.UUID,
 				rigId: DataTypes.UUID,
 				reference: DataTypes.TEXT,
 				ground: DataTypes.TEXT,
