@@ -2,7 +2,7 @@ import { DatabaseError } from 'sequelize';
 import { Conflict } from './errors';
 
 /** Database constraints a person can run into, in words. The database decides; this only explains. */
-const WORDS: Record<string, [code: string, message: string]> = {
+export const CONSTRAINT_WORDS: Record<string, [code: string, message: string]> = {
 	person_email_key: ['email-taken', 'Somebody with this mail address is a member already.'],
 	invitation_open_key: [
 		'already-invited',
@@ -52,6 +52,49 @@ const WORDS: Record<string, [code: string, message: string]> = {
 	analysis_immutable: [
 		'analysis-final',
 		'A finished analysis is kept as computed. Ask for a new one.'
+	],
+	role_grant_once_key: ['role-held', 'This person holds that role already.'],
+	protocol_person_once: [
+		'named-already',
+		'This person is named on the protocol for some of these days already.'
+	],
+	animal_project_once: [
+		'project-overlap',
+		'The animal is in this project on some of these days already.'
+	],
+	sealed_allocation_once_key: [
+		'allocated-already',
+		'The animal has a sealed group in this project. Withdraw it first.'
+	],
+	deputy_once_key: ['deputy-already', 'This person is a deputy for the animal already.'],
+	site_implant_id_label_key: ['label-taken', 'The implant has a site of this name.'],
+	carriage_implant_id_label_key: ['label-taken', 'The implant has a carriage of this name.'],
+	carriage_implant_id_screw_order_key: [
+		'order-taken',
+		'Two carriages of the implant cannot have the same place in the order of screws.'
+	],
+	bundle_implant_id_label_key: ['label-taken', 'The implant has a bundle of this name.'],
+	channel_bundle_id_number_key: ['number-taken', 'The bundle has a channel of this number.'],
+	epoch_run_has_arena: ['run-without-arena', 'A run epoch needs the arena it was run in.'],
+	turn_zero_only_voids: [
+		'nothing-turned',
+		'A turn of nothing is no turn. To take a turn back from the record, correct it to 0.'
+	],
+	turn_immutable: [
+		'turn-final',
+		'The ledger of turns is kept as written. Correct a turn with a new row.'
+	],
+	log_immutable: ['log-final', 'The log is kept as written.'],
+	lab_setting_immutable: ['setting-final', 'Settings are kept as written. Set a new version.'],
+	unit_immutable: [
+		'unit-final',
+		'The spikes of a unit are kept as taken in. Upload a new sorting.'
+	],
+	arena_endpoints_together: ['half-an-end', 'Give both coordinates of both ends, or none.'],
+	arena_endpoints_apart: ['ends-meet', 'The two ends of a track are two different points.'],
+	exclusion_of_one_thing: [
+		'exclude-one-thing',
+		'An exclusion names one unit, one bundle, one session or one day.'
 	]
 };
 
@@ -64,6 +107,6 @@ function constraintOf(fault: unknown): string | undefined {
 /** The refusal that a constraint's violation means, or undefined when it is a bug of ours. */
 export function explainConstraint(fault: DatabaseError | Error): Conflict | undefined {
 	const name = constraintOf(fault) ?? ('parent' in fault ? constraintOf(fault.parent) : undefined);
-	const words = name === undefined ? undefined : WORDS[name];
+	const words = name === undefined ? undefined : CONSTRAINT_WORDS[name];
 	return words && new Conflict(words[0], words[1], { cause: fault });
 }

@@ -43,7 +43,7 @@ CREATE TABLE protocol_person (
 	person_id uuid NOT NULL REFERENCES person,
 	from_day date NOT NULL,
 	until_day date CHECK (until_day >= from_day),
-	EXCLUDE USING gist (
+	CONSTRAINT protocol_person_once EXCLUDE USING gist (
 		protocol_id WITH =, person_id WITH =, daterange(from_day, until_day, '[)') WITH &&
 	)
 );
