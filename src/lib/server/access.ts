@@ -1,5 +1,6 @@
 import type { Role } from '$lib/schemas/roles';
 import { Forbidden, Unauthenticated } from './errors';
+import type { IdempotentCall } from './idempotent-call';
 
 /** Who acts, and by which door they came in. Made once per request and passed down. */
 export interface Actor {
@@ -12,6 +13,8 @@ export interface Actor {
 	via: 'page' | 'token' | 'command' | 'system';
 	/** Tokens of scope "read" may not write, whatever their owner may. */
 	scope: 'read' | 'write';
+	/** Set while a script's call that may be sent twice is recorded. */
+	call?: IdempotentCall;
 }
 
 /**
@@ -75,6 +78,12 @@ export function demand(by: Actor | null, permission: Permission): asserts by is 
 		throw new Forbidden('This token may read only. Make one of scope "write" for this call.');
 	}
 	throw new Forbidden();
+}
+
+/** For what belongs to one person: the system and the command line have no self. */
+export function personOf(by: Actor): string {
+	if (by.personId === null) throw new Forbidden('Only a person can do this.');
+	return by.personId;
 }
 
 /** Acts for the product itself: jobs, the demo lab, the command line on the lab's own machine. */

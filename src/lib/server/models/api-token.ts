@@ -1,6 +1,7 @@
 import {
 	DataTypes,
 	Model,
+	QueryTypes,
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
@@ -8,6 +9,20 @@ import {
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
 import type { TokenScope } from '$lib/schemas/enumerations';
+import type { Role } from '$lib/schemas/roles';
+import { now } from '$lib/server/clock';
+import { db } from '$lib/server/db';
+import { ROLES_OF_PERSON } from './person';
+
+/** A token with what an actor is made of. */
+export interface TokenWithPerson {
+	tokenId: string;
+	personId: string;
+	scope: TokenScope;
+	name: string;
+	isBlinded: boolean;
+	roles: Role[];
+}
 
 /** A script's key; only a hash is kept. */
 export class ApiToken extends Model<InferAttributes<ApiToken>, InferCreationAttributes<ApiToken>> {
@@ -23,6 +38,28 @@ export class ApiToken extends Model<InferAttributes<ApiToken>, InferCreationAttr
 	declare lastUsedAt: CreationOptional<Date | null>;
 	declare revokedAt: CreationOptional<Date | null>;
 	declare revokedBy: CreationOptional<string | null>;
+
+	/** Only a token in force of an active person. */
+	static async withPerson(tokenHash: string): Promise<TokenWithPerson | undefined> {
+		const [row] = await db().query<TokenWithPerson>(
+			`SELECT t.id AS "tokenId", t.person_id AS "personId", t.scope, p.name,
+				p.is_blinded AS "isBlinded", ${ROLES_OF_PERSON} AS roles
+			FROM api_token t JOIN person p ON p.id = t.person_id
+			WHERE t.token_hash = $tokenHash AND t.revoked_at IS NULL AND t.expires_at > $at
+				AND p.deactivated_at IS NULL`,
+			{ bind: { tokenHash, at: now().toISOString() }, type: QueryTypes.SELECT }
+		);
+		return row;
+	}
+
+	/** To the minute: a script that calls a thousand times must not write a thousand times. */
+	static async markUsed(id: string): Promise<void> {
+		await db().query(
+			`UPDATE api_token SET last_used_at = $at WHERE id = $id
+			AND (last_used_at IS NULL OR last_used_at < $at::timestamptz - interval '1 minute')`,
+			{ bind: { id, at: now().toISOString() } }
+		);
+	}
 
 	static define(sequelize: Sequelize): void {
 		ApiToken.init(

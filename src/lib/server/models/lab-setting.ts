@@ -4,7 +4,8 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
-	type Sequelize
+	type Sequelize,
+	type Transaction
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
 
@@ -19,6 +20,10 @@ export class LabSetting extends Model<
 	declare value: unknown;
 	declare setBy: CreationOptional<string | null>;
 	declare setAt: CreationOptional<Date>;
+
+	static latest(key: string, transaction?: Transaction): Promise<LabSetting | null> {
+		return LabSetting.findOne({ where: { key }, order: [['version', 'DESC']], transaction });
+	}
 
 	static define(sequelize: Sequelize): void {
 		LabSetting.init(

@@ -9,6 +9,10 @@ import {
 import { v7 as uuidv7 } from 'uuid';
 import type { Theme } from '$lib/schemas/enumerations';
 
+/** The roles a person `p` holds now, as an array column of a query. */
+export const ROLES_OF_PERSON = `(SELECT coalesce(array_agg(g.role ORDER BY g.role), '{}')
+	FROM role_grant g WHERE g.person_id = p.id AND g.revoked_at IS NULL)`;
+
 /** Somebody who signs in. Never removed: a deactivated person stays as author and signer. */
 export class Person extends Model<InferAttributes<Person>, InferCreationAttributes<Person>> {
 	declare id: CreationOptional<string>;
