@@ -5,9 +5,26 @@ import { vitePreprocess } from '@sveltejs/vite-plugin-svelte';
 export default {
 	preprocess: vitePreprocess(),
 	kit: {
-		adapter: adapter({ out: 'build' }),
+		adapter: adapter({ out: process.env.QUARTERTURN_BUILD ?? 'build/by-hand' }),
 		alias: { $tests: 'tests', $demo: 'src/demo' },
 		csrf: { trustedOrigins: [] },
+		csp: {
+			mode: 'auto',
+			directives: {
+				'default-src': ['self'],
+				'script-src': ['self'],
+				// Lengths that come from data are style attributes; no nonce can cover those.
+				'style-src': ['self', 'unsafe-inline'],
+				'img-src': ['self', 'data:', 'blob:'],
+				'font-src': ['self', 'data:'],
+				'connect-src': ['self'],
+				'worker-src': ['self', 'blob:'],
+				'object-src': ['none'],
+				'base-uri': ['self'],
+				'form-action': ['self'],
+				'frame-ancestors': ['none']
+			}
+		},
 		typescript: {
 			config: (config) => {
 				config.include.push('../tests/**/*.ts', '../*.ts', '../*.js');

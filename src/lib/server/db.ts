@@ -13,6 +13,9 @@ function readNumbers(connection: unknown): void {
 // Kept on globalThis: in development a reload makes this module again, and pools would leak.
 const kept = globalThis as typeof globalThis & { quarterturnDb?: Sequelize };
 
+// A reload also makes the models again; those must be defined anew on the kept connection.
+let isDefined = false;
+
 /** The one Sequelize of the process, connected as the application's role. */
 export function db(): Sequelize {
 	if (!kept.quarterturnDb) {
@@ -26,7 +29,10 @@ export function db(): Sequelize {
 			pool: { max: 10, min: 0, idle: 10_000, acquire: 15_000 },
 			dialectOptions: { application_name: 'quarterturn', keepAlive: true }
 		});
+	}
+	if (!isDefined) {
 		associate(kept.quarterturnDb);
+		isDefined = true;
 	}
 	return kept.quarterturnDb;
 }
@@ -34,5 +40,6 @@ export function db(): Sequelize {
 export async function closeDb(): Promise<void> {
 	const open = kept.quarterturnDb;
 	kept.quarterturnDb = undefined;
+	isDefined = false;
 	await open?.close();
 }
