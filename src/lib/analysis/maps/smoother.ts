@@ -1,0 +1,56 @@
+import type { Arena } from '../arena/arena';
+import type { Bins } from '../arena/bins';
+import { metricOf } from '../arena/metric';
+import { CUT_SIGMAS, gaussianKernel } from './gaussian-kernel';
+import { lineSmoother, type EdgeRule } from './smooth-line';
+
+/** Smooths one map: reads `from`, writes `to`; both have one value per bin and may be the same. */
+export type Smoother = (from: Float64Array, to: Float64Array) => void;
+
+/**
+ * Gaussian smoothing over the bins of an arena, cut at 4 σ.
+ * Lines and grids: separable convolution; a ring always wraps, elsewhere `edge` says what lies
+ * outside. Trees: weights by distance along the maze, nothing outside (`edge` has no meaning);
+ * they are not normalised, which a ratio of two smoothed maps does not notice.
+ * @param sigmaCm 0 for no smoothing
+ * @throws RangeError sigmaCm negative or not finite
+ */
+export function smootherOf(arena: Arena, bins: Bins, sigmaCm: number, edge: EdgeRule): Smoother {
+	const weights = gaussianKernel(sigmaCm / bins.binCm);
+	if (weights.length === 1) return (from, to) => void to.set(from);
+	if (arena.kind === 'tree') return treeSmoother(arena, bins, sigmaCm);
+	const along = lineSmoother(bins.binsX, weights, bins.isRing ? 'wrap' : edge);
+	if (bins.dimensions === 1) return (from, to) => along(from, to, 0, 1);
+	const across = lineSmoother(bins.binsY, weights, edge);
+	return (from, to) => {
+		for (let row = 0; row < bins.binsY; row++) along(from, to, row * bins.binsX, 1);
+		for (let column = 0; column < bins.binsX; column++) across(to, to, column, bins.binsX);
+	};
+}
+
+function treeSmoother(arena: Arena, bins: Bins, sigmaCm: number): Smoother {
+	const metric = metricOf(arena);
+	const { count, centreXCm } = bins;
+	const neighbours: { bins: Int32Array; weights: Float64Array }[] = [];
+	for (let k = 0; k < count; k++) {
+		const near: number[] = [];
+		const weights: number[] = [];
+		for (let j = 0; j < count; j++) {
+			const distance = metric(centreXCm[k], NaN, centreXCm[j], NaN);
+			if (distance > CUT_SIGMAS * sigmaCm) continue;
+			near.push(j);
+			weights.push(Math.exp(-((distance / sigmaCm) ** 2) / 2));
+		}
+		neighbours.push({ bins: Int32Array.from(near), weights: Float64Array.from(weights) });
+	}
+	const copy = new Float64Array(count);
+	return (from, to) => {
+		copy.set(from);
+		for (let k = 0; k < count; k++) {
+			const { bins: near, weights } = neighbours[k];
+			let sum = 0;
+			for (let j = 0; j < near.length; j++) sum += weights[j] * copy[near[j]];
+			to[k] = sum;
+		}
+	};
+}

@@ -1,0 +1,91 @@
+import { medianInterval } from '../position/median-interval';
+import { TableError } from '../tables/table-error';
+import type { SessionInput } from './input';
+
+/** No tracker is this slow; a longer step means that times are not in seconds. */
+const SLOWEST_S = 5;
+/** Seconds that a path must last to say anything. */
+const LEAST_DURATION_S = 1;
+
+/**
+ * Refuses a session that could only give nonsense: unordered or non-finite times, times that are not
+ * seconds, no spikes, spikes of another moment.
+ * @param warnings gets a sentence for what was let pass
+ * @throws TableError with the table, and the row where one can be named
+ */
+export function checkInput({ position, units }: SessionInput, warnings: string[]): void {
+	const { tS } = position;
+	if (tS.length < 2) {
+		throw new TableError(
+			'position',
+			'too-short',
+			`${tS.length} samples are too few to say anything`
+		);
+	}
+	const repeated = checkOrder(position);
+	if (repeated > 0) {
+		warnings.push(
+			`${repeated} positions stand twice in the table, same time and place; no harm done.`
+		);
+	}
+	const stepS = medianInterval(tS);
+	if (stepS > SLOWEST_S) {
+		throw new TableError(
+			'position',
+			'unit-of-time',
+			`samples are ${stepS} s apart, so the times are probably in milliseconds or microseconds; give them in seconds`
+		);
+	}
+	const firstS = tS[0];
+	const lastS = tS[tS.length - 1];
+	if (lastS - firstS < LEAST_DURATION_S) {
+		throw new TableError('position', 'too-short', `${lastS - firstS} s of positions are too few`);
+	}
+	checkSpikes(units, firstS, lastS);
+}
+
+/**
+ * Times must grow. Trackers now and then write a sample twice; a row that is wholly the same as the
+ * one before is let pass and stands for no time.
+ * @returns how many rows stand twice
+ */
+function checkOrder({ tS, xCm, yCm }: SessionInput['position']): number {
+	let repeated = 0;
+	for (let i = 1; i < tS.length; i++) {
+		if (tS[i] > tS[i - 1]) continue;
+		const isBack = tS[i] < tS[i - 1];
+		const isSame = !isBack && xCm[i] === xCm[i - 1] && (!yCm || yCm[i] === yCm[i - 1]);
+		if (!isSame) {
+			const what = isBack ? 'lies before' : 'is the same as';
+			const reason = `the time ${tS[i]} s ${what} the one above it; times must grow`;
+			throw new TableError('position', 'time-order', reason, i + 2, 't_s');
+		}
+		repeated++;
+	}
+	return repeated;
+}
+
+function checkSpikes(units: SessionInput['units'], firstS: number, lastS: number): void {
+	let spikes = 0;
+	let from = Infinity;
+	let to = -Infinity;
+	let isInside = false;
+	for (const { timesS } of units) {
+		if (timesS.length === 0) continue;
+		spikes += timesS.length;
+		from = Math.min(from, timesS[0]);
+		to = Math.max(to, timesS[timesS.length - 1]);
+		isInside ||= timesS.some((time) => time >= firstS && time <= lastS);
+	}
+	if (spikes === 0) throw new TableError('spikes', 'no-spikes', 'the table holds no spike');
+	if (isInside) return;
+	const perMs = from / 1000 <= lastS && to / 1000 >= firstS;
+	const hint = perMs
+		? 'they would fit as milliseconds; give them in seconds'
+		: 'are both on the recorder’s clock?';
+	throw new TableError(
+		'spikes',
+		perMs ? 'unit-of-time' : 'no-overlap',
+		`spikes from ${from} to ${to} s and positions from ${firstS} to ${lastS} s share no moment; ${hint}`
+	);
+}
