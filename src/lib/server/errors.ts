@@ -42,6 +42,16 @@ export class Conflict extends Refusal {
 	}
 }
 
+/** Somebody changed the row since the writer read it. `what` as in a sentence: "animal". */
+export class Stale extends Conflict {
+	constructor(what: string) {
+		super(
+			'stale',
+			`Somebody changed this ${what} meanwhile. Nothing was overwritten: copy what you typed, open the page again, and enter your change once more.`
+		);
+	}
+}
+
 export interface Issue {
 	/** Field name as in the input, '' for the input as a whole. */
 	field: string;

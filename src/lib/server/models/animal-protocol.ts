@@ -4,9 +4,12 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
-	type Sequelize
+	type NonAttribute,
+	type Sequelize,
+	type Transaction
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { Protocol } from './protocol';
 
 /** Days an animal spends on a protocol. */
 export class AnimalProtocol extends Model<
@@ -18,6 +21,22 @@ export class AnimalProtocol extends Model<
 	declare protocolId: string;
 	declare fromDay: string;
 	declare untilDay: CreationOptional<string | null>;
+	declare protocol?: NonAttribute<Protocol>;
+
+	/** Animals that were ever on each protocol: a place once used is not given back. */
+	static async countEver(
+		protocolIds: string[],
+		transaction?: Transaction
+	): Promise<Map<string, number>> {
+		const counts = await AnimalProtocol.count({
+			where: { protocolId: protocolIds },
+			group: ['protocolId'],
+			distinct: true,
+			col: 'animalId',
+			transaction
+		});
+		return new Map(counts.map((row) => [String(row.protocolId), row.count]));
+	}
 
 	static define(sequelize: Sequelize): void {
 		AnimalProtocol.init(

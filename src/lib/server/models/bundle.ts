@@ -4,9 +4,13 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { BundleRole } from './bundle-role';
+import type { Carriage } from './carriage';
+import type { Channel } from './channel';
 import type { BundleKind, DepthZero } from '$lib/schemas/enumerations';
 
 /** A tetrode, stereotrode, single wire or probe shank. */
@@ -23,6 +27,9 @@ export class Bundle extends Model<InferAttributes<Bundle>, InferCreationAttribut
 	declare startDepthUm: CreationOptional<number>;
 	declare zero: CreationOptional<DepthZero>;
 	declare zeroUncertaintyUm: CreationOptional<number | null>;
+	declare carriage?: NonAttribute<Carriage>;
+	declare roles?: NonAttribute<BundleRole[]>;
+	declare channels?: NonAttribute<Channel[]>;
 
 	static define(sequelize: Sequelize): void {
 		Bundle.init(

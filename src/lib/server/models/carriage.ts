@@ -4,9 +4,11 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { Bundle } from './bundle';
 
 /** What one screw moves. */
 export class Carriage extends Model<InferAttributes<Carriage>, InferCreationAttributes<Carriage>> {
@@ -16,6 +18,7 @@ export class Carriage extends Model<InferAttributes<Carriage>, InferCreationAttr
 	declare label: string;
 	declare screwOrder: number;
 	declare startScrewUm: CreationOptional<number>;
+	declare bundles?: NonAttribute<Bundle[]>;
 
 	static define(sequelize: Sequelize): void {
 		Carriage.init(

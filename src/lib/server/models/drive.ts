@@ -4,9 +4,11 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { DriveDesign } from './drive-design';
 
 /** One drive as made, with its serial. */
 export class Drive extends Model<InferAttributes<Drive>, InferCreationAttributes<Drive>> {
@@ -21,6 +23,7 @@ export class Drive extends Model<InferAttributes<Drive>, InferCreationAttributes
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
 	declare withdrawnWhy: CreationOptional<string | null>;
+	declare design?: NonAttribute<DriveDesign>;
 
 	static define(sequelize: Sequelize): void {
 		Drive.init(

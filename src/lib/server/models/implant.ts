@@ -4,9 +4,14 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { Animal } from './animal';
+import type { DriveDesign } from './drive-design';
+import type { Person } from './person';
+import type { Site } from './site';
 
 /** A drive in an animal, from its surgery day on. */
 export class Implant extends Model<InferAttributes<Implant>, InferCreationAttributes<Implant>> {
@@ -29,6 +34,10 @@ export class Implant extends Model<InferAttributes<Implant>, InferCreationAttrib
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
 	declare withdrawnWhy: CreationOptional<string | null>;
+	declare animal?: NonAttribute<Animal>;
+	declare surgeon?: NonAttribute<Person>;
+	declare driveDesign?: NonAttribute<DriveDesign>;
+	declare sites?: NonAttribute<Site[]>;
 
 	static define(sequelize: Sequelize): void {
 		Implant.init(

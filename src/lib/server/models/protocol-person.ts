@@ -4,9 +4,12 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import { inForceOn } from './in-force';
+import type { Person } from './person';
 
 /** Somebody named on a protocol. */
 export class ProtocolPerson extends Model<
@@ -18,6 +21,20 @@ export class ProtocolPerson extends Model<
 	declare personId: string;
 	declare fromDay: string;
 	declare untilDay: CreationOptional<string | null>;
+	declare person?: NonAttribute<Person>;
+
+	/** Ids of the people named on each protocol on a day. */
+	static async namedOn(protocolIds: string[], day: string): Promise<Map<string, string[]>> {
+		const rows = await ProtocolPerson.findAll({
+			where: { protocolId: protocolIds, ...inForceOn(day) }
+		});
+		return new Map(
+			protocolIds.map((id) => [
+				id,
+				rows.filter((row) => row.protocolId === id).map((row) => row.personId)
+			])
+		);
+	}
 
 	static define(sequelize: Sequelize): void {
 		ProtocolPerson.init(

@@ -4,9 +4,11 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { Carriage } from './carriage';
 import type { LayerBand } from '$lib/schemas/layer-band';
 
 /** The carriages over one target. */
@@ -16,6 +18,7 @@ export class Site extends Model<InferAttributes<Site>, InferCreationAttributes<S
 	declare label: string;
 	declare targetLayer: CreationOptional<string>;
 	declare layerBands: CreationOptional<LayerBand[]>;
+	declare carriages?: NonAttribute<Carriage[]>;
 
 	static define(sequelize: Sequelize): void {
 		Site.init(
