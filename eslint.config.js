@@ -19,14 +19,15 @@ const SEQUELIZE = {
 
 /**
  * @param {string[]} files
- * @param {{ group: string[], message?: string, allowTypeImports?: boolean }[]} patterns
+ * @param {({ message?: string, allowTypeImports?: boolean } & ({ group: string[] } | { regex: string }))[]} patterns
  * @param {string[]} [ignores]
+ * @returns {import('eslint').Linter.Config}
  */
 const direction = (files, patterns, ignores = []) => ({
 	files,
 	ignores: ['**/*.test.ts', ...ignores],
 	rules: {
-		'@typescript-eslint/no-restricted-imports': /** @type {const} */ (['error', { patterns }])
+		'@typescript-eslint/no-restricted-imports': ['error', { patterns }]
 	}
 });
 

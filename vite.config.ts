@@ -14,7 +14,7 @@ const threads = defineConfig({
 	resolve: { alias: { $lib: at('./src/lib') } },
 	build: {
 		ssr: true,
-		outDir: 'build/threads',
+		outDir: `${process.env.QUARTERTURN_BUILD ?? 'build/by-hand'}/threads`,
 		emptyOutDir: true,
 		rollupOptions: { input: { thread: at('./src/lib/server/jobs/thread.ts') } }
 	}

@@ -1,16 +1,17 @@
-import { spawn, type ChildProcess, type StdioOptions } from 'node:child_process';
+import { spawn, type ChildProcess } from 'node:child_process';
 import { Writable } from 'node:stream';
 
 /**
  * Runs the program while a pipe from us stays open. However our process ends, kill -9
  * included, the system closes the pipe, the shell's reader wakes and stops the program.
- * `wait` hands the program's own exit status on when it ends by itself.
+ * `wait` hands the program's own exit status on when it ends by itself; the shell's own
+ * remark that its child was stopped is dropped.
  */
 const WATCH = `exec 3<&0
 signal=$1; shift
 "$@" </dev/null 3<&- & program=$!
 { read -r _ <&3; kill -s "$signal" $program 2>/dev/null; } & watcher=$!
-exec 3<&-
+exec 3<&- 2>/dev/null
 wait $program; status=$?
 kill $watcher 2>/dev/null
 exit $status`;
@@ -22,8 +23,8 @@ export interface BoundOptions {
 	env?: NodeJS.ProcessEnv;
 	uid?: number;
 	gid?: number;
-	stdout: StdioOptions;
-	stderr: StdioOptions;
+	stdout: 'pipe' | 'ignore' | number;
+	stderr: 'pipe' | 'ignore' | number;
 	/** How long a stop may take before the program is killed. */
 	patienceMs: number;
 }
@@ -42,7 +43,7 @@ export function startBound(command: string[], options: BoundOptions): BoundProce
 	const child = spawn('/bin/sh', ['-c', WATCH, 'sh', stopSignal, ...command], {
 		...rest,
 		detached: true,
-		stdio: ['pipe', stdout, stderr] as StdioOptions
+		stdio: ['pipe', stdout, stderr]
 	});
 	// The reader may go first; writing to it then is no fault of ours.
 	child.stdin?.on('error', () => undefined);

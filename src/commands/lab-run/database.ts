@@ -1,0 +1,81 @@
+import { existsSync, rmSync, writeFileSync } from 'node:fs';
+import { migrate, pending } from '$lib/server/migrations/migrate';
+import { Refusal } from '../bootstrap/refusal.mjs';
+import { openCluster } from '../cluster/cluster';
+import { DATABASE, createDatabase, withClient } from '../cluster/roles';
+import type { Home } from '../home/home';
+import { say } from '../machine/say';
+import { backUp, isEmpty } from './backup';
+
+export interface LabDatabase {
+	ownerUrl: string;
+	appUrl: string;
+	/** Settles when our own server ends unasked; never for a database of somebody else's. */
+	ended: Promise<number>;
+	stop(): Promise<void>;
+	kill(): void;
+	/** Empties our own database; undefined where it is not ours to empty. */
+	empty?: () => Promise<void>;
+}
+
+/** The database of the settings, or else the home's own cluster, started. */
+export async function openDatabase(home: Home, isThrowAway: boolean): Promise<LabDatabase> {
+	const given = process.env.DATABASE_URL;
+	if (given) {
+		return {
+			ownerUrl: process.env.DATABASE_OWNER_URL || given,
+			appUrl: given,
+			ended: new Promise(() => undefined),
+			stop: async () => undefined,
+			kill: () => undefined
+		};
+	}
+	const cluster = await openCluster(home, isThrowAway);
+	return {
+		...cluster,
+		empty: () =>
+			withClient(cluster.superUrl, async (client) => {
+				await client.query(`DROP DATABASE IF EXISTS ${DATABASE} WITH (FORCE)`);
+				await createDatabase(client, DATABASE);
+			})
+	};
+}
+
+/** Brings the schema up to date, after a backup when there is anything to lose. */
+export async function bringUpToDate(home: Home, database: LabDatabase): Promise<void> {
+	const waiting = await pending(database.ownerUrl);
+	if (waiting.length > 0 && !(await isEmpty(database.ownerUrl))) {
+		const file = await backUp(home, database.ownerUrl, `before-${waiting[0]}`);
+		say(`Updating the database (${waiting.join(', ')}); a backup from before is ${file}`);
+	}
+	await migrate(database.ownerUrl);
+}
+
+/**
+ * Runs `fill` on an empty database. A fill that was cut off is begun again from nothing:
+ * until it is whole no page is served, so the half-filled database holds nobody's work.
+ * @returns whether there was anything to fill
+ */
+export async function fillOnce(
+	home: Home,
+	database: LabDatabase,
+	fill: () => Promise<void>
+): Promise<boolean> {
+	const mark = home.file('filling');
+	if (existsSync(mark)) {
+		if (!database.empty) {
+			throw new Refusal(
+				`Filling the demo lab was cut off earlier, and ${mark} says so. The database is not ours to empty: hand over an empty one, remove that file, and start again.`
+			);
+		}
+		say('Filling the demo lab was cut off earlier; beginning again.');
+		await database.empty();
+		await migrate(database.ownerUrl);
+	} else if (!(await isEmpty(database.ownerUrl))) {
+		return false;
+	}
+	writeFileSync(mark, '');
+	await fill();
+	rmSync(mark);
+	return true;
+}
