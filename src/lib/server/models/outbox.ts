@@ -1,12 +1,16 @@
 import {
 	DataTypes,
 	Model,
+	QueryTypes,
+	type CreationAttributes,
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
-	type Sequelize
+	type Sequelize,
+	type Transaction
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import { db } from '$lib/server/db';
 
 /** A mail to send, sent, or given up. */
 export class Outbox extends Model<InferAttributes<Outbox>, InferCreationAttributes<Outbox>> {
@@ -23,6 +27,24 @@ export class Outbox extends Model<InferAttributes<Outbox>, InferCreationAttribut
 	declare lastError: CreationOptional<string | null>;
 	declare sentAt: CreationOptional<Date | null>;
 	declare deadAt: CreationOptional<Date | null>;
+
+	/** @returns the new row's id, or null when a mail of this key exists */
+	static async putOnce(
+		mail: CreationAttributes<Outbox>,
+		transaction: Transaction
+	): Promise<string | null> {
+		const [row] = await db().query<{ id: string }>(
+			`INSERT INTO outbox (id, dedupe_key, kind, to_email, to_person_id, subject, body_text)
+			VALUES ($id, $dedupeKey, $kind, $toEmail, $toPersonId, $subject, $bodyText)
+			ON CONFLICT (dedupe_key) DO NOTHING RETURNING id`,
+			{
+				bind: { id: uuidv7(), toPersonId: null, ...mail },
+				type: QueryTypes.SELECT,
+				transaction
+			}
+		);
+		return row?.id ?? null;
+	}
 
 	static define(sequelize: Sequelize): void {
 		Outbox.init(
