@@ -1,5 +1,5 @@
 import { relative } from 'node:path';
-import { ensureBuild } from './build/build';
+import { ensureBuild } from './bundle/ensure-build';
 import { CHECKOUT } from './home/home';
 
 /** `npm run build`: the built application of the sources as they are; prints its folder. */

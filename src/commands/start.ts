@@ -1,5 +1,5 @@
 import { join } from 'node:path';
-import { ensureBuild, useBuild } from './build/build';
+import { ensureBuild, useBuild } from './bundle/ensure-build';
 import { runLab } from './lab-run/lab-run';
 
 /** `npm start`: the whole lab, built, on this machine. */
