@@ -94,6 +94,7 @@ export function associate(sequelize: Sequelize): void {
 	AnimalProject.belongsTo(Animal, { as: 'animal', foreignKey: 'animalId' });
 	Animal.hasMany(Weight, { as: 'weights', foreignKey: 'animalId' });
 	Weight.belongsTo(Animal, { as: 'animal', foreignKey: 'animalId' });
+	Weight.belongsTo(Person, { as: 'measurer', foreignKey: 'measuredBy' });
 	Animal.hasMany(Implant, { as: 'implants', foreignKey: 'animalId' });
 	Implant.belongsTo(Animal, { as: 'animal', foreignKey: 'animalId' });
 	Implant.hasMany(Site, { as: 'sites', foreignKey: 'implantId' });
@@ -126,10 +127,21 @@ export function associate(sequelize: Sequelize): void {
 	AnimalProject.belongsTo(Project, { as: 'project', foreignKey: 'projectId' });
 	Epoch.belongsTo(Arena, { as: 'arena', foreignKey: 'arenaId' });
 	Session.belongsTo(Rig, { as: 'rig', foreignKey: 'rigId' });
+	Session.belongsTo(Arena, { as: 'arena', foreignKey: 'arenaId' });
+	Session.belongsTo(Person, { as: 'creator', foreignKey: 'createdBy' });
+	DataFile.belongsTo(Person, { as: 'uploader', foreignKey: 'uploadedBy' });
+	Sorting.hasMany(SortingSession, { as: 'covers', foreignKey: 'sortingId' });
+	SortingSession.belongsTo(Sorting, { as: 'sorting', foreignKey: 'sortingId' });
 	Implant.belongsTo(DriveDesign, { as: 'driveDesign', foreignKey: 'driveDesignId' });
 	Implant.belongsTo(Person, { as: 'surgeon', foreignKey: 'surgeonId' });
 	Drive.belongsTo(DriveDesign, { as: 'design', foreignKey: 'designId' });
 	Sorting.belongsTo(Person, { as: 'person', foreignKey: 'personId' });
 	ProtocolPerson.belongsTo(Person, { as: 'person', foreignKey: 'personId' });
 	Analysis.belongsTo(Sorting, { as: 'sorting', foreignKey: 'sortingId' });
+	Turn.belongsTo(Person, { as: 'person', foreignKey: 'personId' });
+	Tally.belongsTo(Person, { as: 'person', foreignKey: 'personId' });
+	Landmark.belongsTo(Person, { as: 'person', foreignKey: 'personId' });
+	Exclusion.belongsTo(Person, { as: 'person', foreignKey: 'personId' });
+	Tally.belongsTo(Bundle, { as: 'bundle', foreignKey: 'bundleId' });
+	Landmark.belongsTo(Bundle, { as: 'bundle', foreignKey: 'bundleId' });
 }

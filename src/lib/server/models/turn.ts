@@ -4,9 +4,12 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
-	type Sequelize
+	type NonAttribute,
+	type Sequelize,
+	type Transaction
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import { Person } from './person';
 
 /** One entry of the ledger; corrections are later rows that replace it. */
 export class Turn extends Model<InferAttributes<Turn>, InferCreationAttributes<Turn>> {
@@ -19,6 +22,20 @@ export class Turn extends Model<InferAttributes<Turn>, InferCreationAttributes<T
 	declare reason: CreationOptional<string>;
 	declare replacesId: CreationOptional<string | null>;
 	declare isEnteredLater: CreationOptional<boolean>;
+	declare person?: NonAttribute<Person>;
+
+	/** Every row of these carriages, replaced ones too, by the time they were done. */
+	static ofCarriages(carriageIds: string[], transaction?: Transaction): Promise<Turn[]> {
+		return Turn.findAll({
+			where: { carriageId: carriageIds },
+			include: { model: Person, as: 'person', attributes: ['name'] },
+			order: [
+				['doneAt', 'ASC'],
+				['id', 'ASC']
+			],
+			transaction
+		});
+	}
 
 	static define(sequelize: Sequelize): void {
 		Turn.init(
