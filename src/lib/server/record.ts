@@ -5,6 +5,7 @@ import { db } from './db';
 import { enqueue } from './jobs/enqueue';
 import type { QueueData, QueueName } from './jobs/queues';
 import { explainConstraint } from './constraints';
+import { markRecorded } from './idempotent-call';
 
 export interface Subject {
 	kind: string;
@@ -36,6 +37,7 @@ export async function record<T>(by: Actor, work: (w: Write) => Promise<T>): Prom
 				enqueue: (queue, data) => enqueue(queue, data, t)
 			});
 			if (rows.length === 0) throw new Error('A write without a log row');
+			await markRecorded(by, t);
 			for (const row of rows) await append(by, row.action, row.subject, row.detail, t);
 			return result;
 		});

@@ -18,7 +18,6 @@ const ALLOWANCES = {
 	'reset-account': { tries: 3, withinS: 60 * 60 },
 	'reset-address': { tries: 20, withinS: 60 * 60 },
 	'link-address': { tries: 60, withinS: 15 * 60 },
-	'api-token': { tries: 1200, withinS: 60 },
 	'password-account': { tries: 10, withinS: 15 * 60 },
 	// A loop over a day's files is far below this; a script gone wild is above it at once.
 	'api-token': { tries: 1200, withinS: 60 }

@@ -99,31 +99,3 @@ export function signInAddress(event: RequestEvent): string {
 	const back = event.request.method === 'GET' ? event.url.pathname + event.url.search : '/';
 	return `/sign-in?next=${encodeURIComponent(back)}`;
 }
-
-/** The same for API routes: RFC 9457 problem details with a stable `code`. */
-export async function api(work: () => Promise<Response>): Promise<Response> {
-	try {
-		return await work();
-	} catch (fault) {
-		if (fault instanceof Refusal) return problem(fault);
-		throw fault;
-	}
-}
-
-export function problem(refusal: Refusal): Response {
-	const headers = new Headers({ 'content-type': 'application/problem+json' });
-	if (refusal instanceof TooMany)
-		headers.set('retry-after', String(Math.ceil(refusal.retryAfterS)));
-	if (refusal instanceof Unauthenticated) headers.set('www-authenticate', 'Bearer');
-	return json(
-		{
-			type: 'about:blank',
-			title: refusal.name,
-			status: refusal.status,
-			code: refusal.code,
-			detail: refusal.message,
-			...(refusal instanceof Invalid && { issues: refusal.issues })
-		},
-		{ status: refusal.status, headers }
-	);
-}

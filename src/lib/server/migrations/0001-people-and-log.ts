@@ -92,7 +92,8 @@ CREATE TABLE idempotency_key (
 	key text NOT NULL CHECK (length(key) BETWEEN 1 AND 200),
 	request_hash text NOT NULL,
 	status integer NOT NULL,
-	body jsonb NOT NULL,
+	-- json, not jsonb: the same answer again, to the letter.
+	body json NOT NULL,
 	created_at timestamptz NOT NULL DEFAULT now(),
 	PRIMARY KEY (person_id, key)
 );

@@ -26,7 +26,7 @@ export class IdempotencyKey extends Model<
 				key: { type: DataTypes.TEXT, primaryKey: true },
 				requestHash: { type: DataTypes.TEXT, allowNull: false },
 				status: { type: DataTypes.INTEGER, allowNull: false },
-				body: { type: DataTypes.JSONB, allowNull: false },
+				body: { type: DataTypes.JSON, allowNull: false },
 				createdAt: DataTypes.DATE
 			},
 			{ sequelize, tableName: 'idempotency_key' }
