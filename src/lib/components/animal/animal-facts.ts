@@ -8,8 +8,8 @@ export interface AnimalFacts {
 	birthDate: string | null;
 	/** Number of the approved protocol in force. */
 	protocol: string | null;
-	/** Lowest share of the baseline weight the protocol allows, 0 to 1. */
-	floorShare: number;
+	/** Lowest share of the baseline weight the protocol allows, 0 to 1; null without a protocol. */
+	floorShare: number | null;
 	/** The latest weight without the implant's mass, and its share of the baseline. */
 	weight: { weightG: number; share: number | null; at: string } | null;
 	/** "Right dorsal CA1, 16 tetrodes". */

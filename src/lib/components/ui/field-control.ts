@@ -18,4 +18,4 @@ export interface FieldProps {
 }
 
 export const controlClass =
-	'w-full min-w-0 rounded-control border border-edge bg-paper px-2.5 text-base text-ink min-h-9 touch:min-h-11 disabled:opacity-55 read-only:bg-well aria-invalid:border-fault aria-invalid:ring-1 aria-invalid:ring-fault';
+	'w-full min-w-0 rounded-control border border-edge bg-paper px-2.5 text-base text-ink min-h-9 touch:min-h-11 disabled:opacity-55 [&[readonly]]:bg-well aria-invalid:border-fault aria-invalid:ring-1 aria-invalid:ring-fault';
