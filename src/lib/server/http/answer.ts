@@ -1,4 +1,4 @@
-import { error, fail, json, redirect, type ActionFailure, type RequestEvent } from '@sveltejs/kit';
+import { error, fail, redirect, type ActionFailure, type RequestEvent } from '@sveltejs/kit';
 import { setError, superValidate, type SuperValidated } from 'sveltekit-superforms';
 import type { ValidationAdapter } from 'sveltekit-superforms/adapters';
 import { Conflict, Invalid, Refusal, TooLarge, TooMany, Unauthenticated } from '$lib/server/errors';
