@@ -3,8 +3,8 @@ import { settings } from '$lib/server/settings';
 export type LinkKind = 'invitation' | 'reset' | 'first';
 
 /** The one-time address a mail or a command hands over. */
-export function linkTo(kind: LinkKind, secret: string): string {
-	return new URL(`/${kind}/${secret}`, settings().origin).href;
+export function linkTo(kind: LinkKind, secret: string, origin = settings().origin): string {
+	return new URL(`/${kind}/${secret}`, origin).href;
 }
 
 /**

@@ -24,6 +24,20 @@ export interface TokenWithPerson {
 	roles: Role[];
 }
 
+/** A token as its owner, a PI or an admin sees it. */
+export interface TokenRow {
+	id: string;
+	name: string;
+	shownPrefix: string;
+	scope: TokenScope;
+	createdAt: Date;
+	expiresAt: Date;
+	lastUsedAt: Date | null;
+	revokedAt: Date | null;
+	personId: string;
+	personName: string;
+}
+
 /** A script's key; only a hash is kept. */
 export class ApiToken extends Model<InferAttributes<ApiToken>, InferCreationAttributes<ApiToken>> {
 	declare id: CreationOptional<string>;
@@ -50,6 +64,20 @@ export class ApiToken extends Model<InferAttributes<ApiToken>, InferCreationAttr
 			{ bind: { tokenHash, at: now().toISOString() }, type: QueryTypes.SELECT }
 		);
 		return row;
+	}
+
+	/** The newest first; one person's, or everybody's. */
+	static ofPeople(personId: string | null = null): Promise<TokenRow[]> {
+		return db().query<TokenRow>(
+			`SELECT t.id, t.name, t.shown_prefix AS "shownPrefix", t.scope,
+				t.created_at AS "createdAt", t.expires_at AS "expiresAt",
+				t.last_used_at AS "lastUsedAt", t.revoked_at AS "revokedAt",
+				t.person_id AS "personId", p.name AS "personName"
+			FROM api_token t JOIN person p ON p.id = t.person_id
+			WHERE $personId::uuid IS NULL OR t.person_id = $personId
+			ORDER BY t.id DESC`,
+			{ bind: { personId }, type: QueryTypes.SELECT }
+		);
 	}
 
 	/** To the minute: a script that calls a thousand times must not write a thousand times. */

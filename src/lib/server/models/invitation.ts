@@ -1,6 +1,7 @@
 import {
 	DataTypes,
 	Model,
+	Op,
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
@@ -8,6 +9,9 @@ import {
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
 import type { Role } from '$lib/schemas/roles';
+
+/** In place of an address: the one-time way in for the first PI of an empty lab. No `@`, so never mail. */
+export const FIRST_PI = 'first-pi';
 
 /** A place in the lab offered by mail. */
 export class Invitation extends Model<
@@ -26,6 +30,13 @@ export class Invitation extends Model<
 	declare acceptedBy: CreationOptional<string | null>;
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
+
+	static open(): Promise<Invitation[]> {
+		return Invitation.findAll({
+			where: { acceptedAt: null, withdrawnAt: null, email: { [Op.ne]: FIRST_PI } },
+			order: [['createdAt', 'DESC']]
+		});
+	}
 
 	static define(sequelize: Sequelize): void {
 		Invitation.init(
