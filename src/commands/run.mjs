@@ -1,7 +1,7 @@
 #!/usr/bin/env node
 // The one entry of every command. It may use nothing but Node's own modules until
 // the packages are there, so it is plain JavaScript; the commands are TypeScript.
-import { existsSync, readdirSync } from 'node:fs';
+import { existsSync, readFileSync, readdirSync } from 'node:fs';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import { join } from 'node:path';
 import process from 'node:process';
@@ -34,6 +34,9 @@ async function main() {
 	const envFile = join(root, '.env');
 	if (!COMMANDS_WITHOUT_ENV_FILE.has(name) && existsSync(envFile)) process.loadEnvFile(envFile);
 
+	const { version } = JSON.parse(readFileSync(join(root, 'package.json'), 'utf8'));
+	process.env.QUARTERTURN_VERSION ??= version;
+
 	const { ensurePackages } = await import('./bootstrap/packages.mjs');
 	await ensurePackages(root);
 
@@ -52,5 +55,6 @@ try {
 	const text =
 		error instanceof Refusal ? error.message : error instanceof Error ? error.stack : error;
 	process.stderr.write(`${text}\n`);
-	process.exitCode = error instanceof Refusal ? error.exitCode : 1;
+	// What a failed command left under way ends here.
+	process.exit(error instanceof Refusal ? error.exitCode : 1);
 }

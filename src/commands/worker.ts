@@ -1,13 +1,12 @@
 import { once } from 'node:events';
 import { joinLab } from './lab-run/join-lab';
-import { say } from './machine/say';
 
 /** `npm run worker`: takes jobs from the queue until told to stop; any number may run. */
 export default async function worker(): Promise<number> {
 	const leave = await joinLab();
 	const { startWorker } = await import('$lib/server/jobs/worker');
 	const running = await startWorker();
-	say(`Worker ${process.pid} takes jobs.`);
+	console.log(`Worker ${process.pid} takes jobs.`);
 	await Promise.race([once(process, 'SIGTERM'), once(process, 'SIGINT')]);
 	await running.stop();
 	await leave();

@@ -1,10 +1,11 @@
-import { spawn } from 'node:child_process';
 import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
+import { stripVTControlCharacters } from 'node:util';
 import { holderOf, tryLock } from '../bootstrap/lock.mjs';
 import { Refusal } from '../bootstrap/refusal.mjs';
 import { CHECKOUT } from '../home/home';
+import { runProgram } from '../machine/run-program';
 import { say } from '../machine/say';
 import { sourcesHash } from './sources-hash';
 
@@ -53,23 +54,14 @@ async function build(folder: string): Promise<void> {
 	renameSync(part, folder);
 }
 
-function run(args: string[], out: string): Promise<void> {
-	return new Promise((resolve, reject) => {
-		const child = spawn(process.execPath, args, {
-			cwd: CHECKOUT,
-			env: { ...process.env, NODE_ENV: 'production', NO_COLOR: '1', QUARTERTURN_BUILD: out },
-			stdio: ['ignore', 'pipe', 'pipe']
-		});
-		let words = '';
-		const keep = (chunk: Buffer) => (words += chunk);
-		child.stdout.on('data', keep);
-		child.stderr.on('data', keep);
-		child.on('error', reject);
-		child.on('close', (code) => {
-			if (code === 0) resolve();
-			else reject(new Refusal(`Building failed (exit ${code}):\n${words.trim()}`));
-		});
+async function run(args: string[], out: string): Promise<void> {
+	const { code, words } = await runProgram([process.execPath, ...args], {
+		cwd: CHECKOUT,
+		env: { ...process.env, NODE_ENV: 'production', QUARTERTURN_BUILD: out }
 	});
+	if (code !== 0) {
+		throw new Refusal(`Building failed (exit ${code}):\n${stripVTControlCharacters(words)}`);
+	}
 }
 
 async function waitForLock(): Promise<() => void> {

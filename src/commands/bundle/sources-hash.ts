@@ -17,7 +17,10 @@ const BUILT_FROM = [
 export function sourcesHash(checkout: string): string {
 	const hash = createHash('sha256');
 	for (const path of BUILT_FROM.flatMap((name) => filesBelow(checkout, name))) {
-		hash.update(`${path}\0`).update(readFileSync(join(checkout, path))).update('\0');
+		hash
+			.update(`${path}\0`)
+			.update(readFileSync(join(checkout, path)))
+			.update('\0');
 	}
 	return hash.digest('hex').slice(0, 16);
 }

@@ -1,6 +1,6 @@
-import { spawn } from 'node:child_process';
 import { chownSync, existsSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
+import { runProgram } from '../machine/run-program';
 import { say } from '../machine/say';
 import type { PostgresPrograms } from './programs';
 import type { ServerUser } from './server-user';
@@ -42,39 +42,22 @@ export async function ensureData(
 	writeFileSync(passwordFile, password, { mode: 0o600 });
 	if (user) chownSync(passwordFile, user.uid, user.gid);
 	try {
-		await initdb(programs.program('initdb'), place, user, [
-			`--pgdata=${making}`,
-			`--username=${SUPERUSER}`,
-			`--pwfile=${passwordFile}`,
-			'--auth=scram-sha-256',
-			'--encoding=UTF8',
-			'--locale=C.UTF-8',
-			...(isThrowAway ? ['--no-sync'] : [])
-		]);
+		const { code, words } = await runProgram(
+			[
+				programs.program('initdb'),
+				`--pgdata=${making}`,
+				`--username=${SUPERUSER}`,
+				`--pwfile=${passwordFile}`,
+				'--auth=scram-sha-256',
+				'--encoding=UTF8',
+				'--locale=C.UTF-8',
+				...(isThrowAway ? ['--no-sync'] : [])
+			],
+			{ ...user, cwd: place }
+		);
+		if (code !== 0) throw new Error(`initdb failed (exit ${code}): ${words}`);
 	} finally {
 		rmSync(passwordFile, { force: true });
 	}
 	renameSync(making, dataFolder(place));
-}
-
-function initdb(
-	program: string,
-	place: string,
-	user: ServerUser | undefined,
-	args: string[]
-): Promise<void> {
-	return new Promise((resolve, reject) => {
-		const child = spawn(program, args, {
-			...user,
-			cwd: place,
-			stdio: ['ignore', 'ignore', 'pipe']
-		});
-		let words = '';
-		child.stderr.on('data', (chunk) => (words += chunk));
-		child.on('error', reject);
-		child.on('close', (code) => {
-			if (code === 0) resolve();
-			else reject(new Error(`initdb failed (exit ${code}): ${words.trim()}`));
-		});
-	});
 }

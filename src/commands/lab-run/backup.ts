@@ -1,9 +1,9 @@
-import { spawn } from 'node:child_process';
 import { chmodSync, mkdirSync, renameSync, rmSync } from 'node:fs';
 import { Refusal } from '../bootstrap/refusal.mjs';
 import { postgresPrograms } from '../cluster/programs';
 import { withClient } from '../cluster/roles';
 import type { Home } from '../home/home';
+import { runProgram } from '../machine/run-program';
 
 /**
  * A copy of the whole database in pg_dump's own format, readable by this user alone.
@@ -33,7 +33,7 @@ export async function isEmpty(ownerUrl: string): Promise<boolean> {
 	});
 }
 
-function dump(program: string, url: string, file: string): Promise<void> {
+async function dump(program: string, url: string, file: string): Promise<void> {
 	const login = new URL(url);
 	const args = [
 		'--format=custom',
@@ -46,19 +46,10 @@ function dump(program: string, url: string, file: string): Promise<void> {
 	];
 	// The password goes through the environment: arguments can be read by every user.
 	const env = { ...process.env, PGPASSWORD: decodeURIComponent(login.password) };
-	return new Promise((resolve, reject) => {
-		const child = spawn(program, args, { env, stdio: ['ignore', 'ignore', 'pipe'] });
-		let words = '';
-		child.stderr.on('data', (chunk) => (words += chunk));
-		child.on('error', reject);
-		child.on('close', (code) => {
-			if (code === 0) resolve();
-			else
-				reject(
-					new Refusal(
-						`The backup before the update failed, so the update was not made and the records are as they were. What pg_dump said:\n\n${words.trim()}`
-					)
-				);
-		});
-	});
+	const { code, words } = await runProgram([program, ...args], { env });
+	if (code !== 0) {
+		throw new Refusal(
+			`The backup before the update failed, so the update was not made and the records are as they were. What pg_dump said:\n\n${words}`
+		);
+	}
 }

@@ -48,14 +48,17 @@ export async function runLab(mode: Mode): Promise<number> {
 	});
 	try {
 		await startAll(mode, home, signals, running, lock.update);
-		return 0;
 	} catch (error) {
-		if (error instanceof Stopped) return 0;
-		throw error;
+		if (!(error instanceof Stopped)) throw error;
 	} finally {
-		for (const part of running.reverse()) await part.stop();
+		// The database goes last: the others finish their work with it.
+		const [database, ...users] = running;
+		await Promise.all(users.map((part) => part.stop()));
+		await database?.stop();
 		lock.release();
 	}
+	// A step that was cut short (a build, a filling) must not hold the process up.
+	process.exit(0);
 }
 
 async function startAll(

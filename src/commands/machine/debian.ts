@@ -1,7 +1,7 @@
-import { spawn } from 'node:child_process';
 import { accessSync, constants } from 'node:fs';
 import { delimiter, join } from 'node:path';
 import { Refusal } from '../bootstrap/refusal.mjs';
+import { runProgram } from './run-program';
 import { say } from './say';
 
 const APT = ['-y', '--no-install-recommends', '-o', 'DPkg::Lock::Timeout=600'];
@@ -44,10 +44,10 @@ export async function installPackage(wanted: DebianPackage): Promise<void> {
 		);
 	}
 	say(`Installing Debian's package ${wanted.name} for ${wanted.purpose} …`);
-	const { code, output } = await runQuietly([...asRoot, 'sh', '-c', script]);
+	const { code, words } = await runProgram([...asRoot, 'sh', '-c', script]);
 	if (code !== 0) {
 		throw new Refusal(
-			`Installing ${wanted.name} failed. What apt-get said last:\n\n${output.trim().split('\n').slice(-8).join('\n')}\n\nNothing of the lab was changed. Mend that, then start again.`
+			`Installing ${wanted.name} failed. What apt-get said last:\n\n${words.split('\n').slice(-8).join('\n')}\n\nNothing of the lab was changed. Mend that, then start again.`
 		);
 	}
 }
@@ -58,22 +58,7 @@ function aptLine(words: string): string {
 }
 
 async function mayUseSudo(): Promise<boolean> {
-	return Boolean(findProgram('sudo')) && (await runQuietly(['sudo', '-n', 'true'])).code === 0;
-}
-
-function runQuietly([command, ...args]: string[]): Promise<{
-	code: number | null;
-	output: string;
-}> {
-	return new Promise((resolve, reject) => {
-		const child = spawn(command, args, { stdio: ['ignore', 'pipe', 'pipe'] });
-		let output = '';
-		const keep = (chunk: Buffer) => (output = (output + chunk).slice(-20_000));
-		child.stdout.on('data', keep);
-		child.stderr.on('data', keep);
-		child.on('error', reject);
-		child.on('close', (code) => resolve({ code, output }));
-	});
+	return Boolean(findProgram('sudo')) && (await runProgram(['sudo', '-n', 'true'])).code === 0;
 }
 
 /** The full path of a program, also where a person's PATH leaves out the system folders. */
