@@ -15,6 +15,16 @@ const LEAST_DURATION_S = 1;
  */
 export function checkInput({ position, units }: SessionInput, warnings: string[]): void {
 	const { tS } = position;
+	checkPath(position, warnings);
+	checkSpikes(units, tS[0], tS[tS.length - 1]);
+}
+
+/**
+ * The part of it that concerns positions alone, for when they come before the spikes.
+ * @throws TableError
+ */
+export function checkPath(position: SessionInput['position'], warnings: string[]): void {
+	const { tS } = position;
 	if (tS.length < 2) {
 		throw new TableError(
 			'position',
@@ -25,7 +35,7 @@ export function checkInput({ position, units }: SessionInput, warnings: string[]
 	const repeated = checkOrder(position);
 	if (repeated > 0) {
 		warnings.push(
-			`${repeated} positions stand twice in the table, same time and place; no harm done.`
+			`${repeated === 1 ? '1 position stands' : `${repeated} positions stand`} twice in the table, same time and place; the second counts for no time.`
 		);
 	}
 	const stepS = medianInterval(tS);
@@ -36,12 +46,10 @@ export function checkInput({ position, units }: SessionInput, warnings: string[]
 			`samples are ${stepS} s apart, so the times are probably in milliseconds or microseconds; give them in seconds`
 		);
 	}
-	const firstS = tS[0];
-	const lastS = tS[tS.length - 1];
-	if (lastS - firstS < LEAST_DURATION_S) {
-		throw new TableError('position', 'too-short', `${lastS - firstS} s of positions are too few`);
+	const durationS = tS[tS.length - 1] - tS[0];
+	if (durationS < LEAST_DURATION_S) {
+		throw new TableError('position', 'too-short', `${durationS} s of positions are too few`);
 	}
-	checkSpikes(units, firstS, lastS);
 }
 
 /**
@@ -49,7 +57,7 @@ export function checkInput({ position, units }: SessionInput, warnings: string[]
  * one before is let pass and stands for no time.
  * @returns how many rows stand twice
  */
-function checkOrder({ tS, xCm, yCm }: SessionInput['position']): number {
+function checkOrder({ tS, xCm, yCm, firstRow = 2 }: SessionInput['position']): number {
 	let repeated = 0;
 	for (let i = 1; i < tS.length; i++) {
 		if (tS[i] > tS[i - 1]) continue;
@@ -58,14 +66,18 @@ function checkOrder({ tS, xCm, yCm }: SessionInput['position']): number {
 		if (!isSame) {
 			const what = isBack ? 'lies before' : 'is the same as';
 			const reason = `the time ${tS[i]} s ${what} the one above it; times must grow`;
-			throw new TableError('position', 'time-order', reason, i + 2, 't_s');
+			throw new TableError('position', 'time-order', reason, i + firstRow, 't_s');
 		}
 		repeated++;
 	}
 	return repeated;
 }
 
-function checkSpikes(units: SessionInput['units'], firstS: number, lastS: number): void {
+/**
+ * Refuses spikes that share no moment with the positions.
+ * @throws TableError
+ */
+export function checkSpikes(units: SessionInput['units'], firstS: number, lastS: number): void {
 	let spikes = 0;
 	let from = Infinity;
 	let to = -Infinity;

@@ -6,6 +6,8 @@ export interface PositionInput {
 	readonly tS: Float64Array;
 	readonly xCm: Float64Array;
 	readonly yCm: Float64Array | null;
+	/** Row of the first sample in its file, for messages: 2 below a header. */
+	readonly firstRow?: number;
 }
 
 /** Spikes of one unit, ascending. */

@@ -63,7 +63,7 @@ export function preparePath(
 	}
 	const isRun = (i: number) => stretch[i] >= 0;
 	const placed = placeInArena(arena, metric, xCm, yCm, isRun, input.ends);
-	refuseMisfit(placed.xCm, placed.outside, warnings);
+	refuseMisfit(placed.xCm, placed.outside, input.position.firstRow ?? 2, warnings);
 	const standS = standingTime(tS, stretch, medianIntervalS);
 	const reach = Math.max(1, Math.round(SPEED_REACH_S / medianIntervalS));
 	const speedCmS = speedOf(tS, placed.xCm, placed.yCm, stretch, reach, metric);
@@ -101,7 +101,12 @@ function lapsOf({ arena }: Ground, xCm: Float64Array, stretch: Int32Array): Laps
 	return null;
 }
 
-function refuseMisfit(xCm: Float64Array, outside: number, warnings: string[]): void {
+function refuseMisfit(
+	xCm: Float64Array,
+	outside: number,
+	firstRow: number,
+	warnings: string[]
+): void {
 	if (outside === 0) return;
 	const first = xCm.findIndex((x) => Number.isNaN(x));
 	if (outside > xCm.length / 2) {
@@ -109,10 +114,10 @@ function refuseMisfit(xCm: Float64Array, outside: number, warnings: string[]): v
 			'position',
 			'outside-arena',
 			`${outside} of ${xCm.length} samples lie outside the arena by more than ${MARGIN_CM} cm; check its size, its origin and the scale of the positions`,
-			first + 2
+			first + firstRow
 		);
 	}
 	warnings.push(
-		`${outside} of ${xCm.length} positions lie outside the arena by more than ${MARGIN_CM} cm and are left out, the first in row ${first + 2}.`
+		`${outside} of ${xCm.length} positions lie outside the arena by more than ${MARGIN_CM} cm and are left out, the first in row ${first + firstRow}.`
 	);
 }
