@@ -50,6 +50,7 @@ export const PERMISSIONS = {
 	'tokens.others': ['pi', 'admin'],
 	'mail.read': ['pi', 'admin'],
 	'jobs.read': ['pi', 'admin'],
+	'jobs.write': ['pi', 'admin'],
 	'log.read': ['pi', 'admin'],
 	'own.read': ['observer', 'experimenter', 'surgeon', 'welfare', 'pi', 'admin'],
 	'own.write': ['observer', 'experimenter', 'surgeon', 'welfare', 'pi', 'admin']
@@ -76,6 +77,9 @@ export function demand(by: Actor | null, permission: Permission): asserts by is 
 	if (may(by, permission)) return;
 	if (by.via === 'token' && by.scope === 'read' && !isReading(permission)) {
 		throw new Forbidden('This token may read only. Make one of scope "write" for this call.');
+	}
+	if (permission === 'allocations.read' && by.isBlinded) {
+		throw new Forbidden('You are marked blinded, so allocations stay sealed for you.');
 	}
 	throw new Forbidden();
 }

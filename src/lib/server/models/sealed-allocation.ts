@@ -1,12 +1,24 @@
 import {
 	DataTypes,
 	Model,
+	QueryTypes,
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import { db } from '$lib/server/db';
+
+/** Without the group: that column leaves the table through a logged opening only. */
+export interface AllocationRow {
+	id: string;
+	animalId: string;
+	animalCode: string;
+	projectId: string;
+	projectName: string;
+	sealedAt: Date;
+}
 
 /** The group an animal was allotted to, hidden from blinded people. */
 export class SealedAllocation extends Model<
@@ -22,6 +34,18 @@ export class SealedAllocation extends Model<
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
 	declare withdrawnWhy: CreationOptional<string | null>;
+
+	static standing(projectId: string | null = null): Promise<AllocationRow[]> {
+		return db().query<AllocationRow>(
+			`SELECT s.id, s.animal_id AS "animalId", a.code AS "animalCode",
+				s.project_id AS "projectId", p.name AS "projectName", s.sealed_at AS "sealedAt"
+			FROM sealed_allocation s JOIN animal a ON a.id = s.animal_id
+				JOIN project p ON p.id = s.project_id
+			WHERE s.withdrawn_at IS NULL AND ($projectId::uuid IS NULL OR s.project_id = $projectId)
+			ORDER BY p.name, a.code`,
+			{ bind: { projectId }, type: QueryTypes.SELECT }
+		);
+	}
 
 	static define(sequelize: Sequelize): void {
 		SealedAllocation.init(

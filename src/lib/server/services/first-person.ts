@@ -28,6 +28,7 @@ export async function address(origin?: string): Promise<string | null> {
 	const by = systemActor('command');
 	demand(by, 'members.write');
 	if ((await Person.count()) > 0) return null;
+	await labSettings.prepare(by);
 	const secret = newSecret();
 	const fresh = { tokenHash: hashSecret(secret), expiresAt: new Date(now().getTime() + WEEK_MS) };
 	await record(by, async (w) => {

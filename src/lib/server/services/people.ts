@@ -10,6 +10,7 @@ import { linkTo } from '$lib/server/mail/links';
 import { Person } from '$lib/server/models/person';
 import { parsed } from '$lib/server/parsed';
 import { record } from '$lib/server/record';
+import * as firstPerson from './first-person';
 import { giveRoles } from './invitations';
 import * as labSettings from './lab-settings';
 import * as outbox from './outbox';
@@ -76,6 +77,11 @@ export async function choices(by: Actor | null): Promise<{ id: string; name: str
 		order: [['name', 'ASC']]
 	});
 	return people.map(({ id, name }) => ({ id, name }));
+}
+
+/** For whoever starts the server: see `first-person`. */
+export function firstAddress(origin?: string): Promise<string | null> {
+	return firstPerson.address(origin);
 }
 
 const WELCOME_DAYS = 7;
