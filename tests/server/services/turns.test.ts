@@ -1,14 +1,11 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import type { Actor } from '$lib/server/access';
-import { setClock } from '$lib/server/clock';
-import * as labSettings from '$lib/server/services/lab-settings';
 import * as turns from '$lib/server/services/turns';
-import { systemActor } from '$lib/server/access';
-import { record } from '$lib/server/record';
 import { makeActor } from '../../factories/actor';
 import { makeAnimal } from '../../factories/animal';
 import { makeImplant } from '../../factories/implant';
 import { ask } from '../invariants/catalogue';
+import { holdLabAt } from './lab-of-tests';
 
 let by: Actor & { personId: string };
 
@@ -19,9 +16,7 @@ async function rat(fields: Parameters<typeof makeImplant>[0] = {}) {
 }
 
 beforeAll(async () => {
-	setClock(() => new Date('2026-03-10T12:00:00Z'));
-	const lab = { name: 'Lab', timeZone: 'UTC', dayStartsAt: '04:00', isDemo: false };
-	await record(systemActor(), (w) => labSettings.put(w, systemActor(), 'lab', lab));
+	await holdLabAt('2026-03-10T12:00:00Z');
 	by = await makeActor('experimenter');
 });
 

@@ -40,7 +40,8 @@ import { Turn } from './turn';
 import { Unit } from './unit';
 import { Weight } from './weight';
 
-const models = [
+/** Read when called, not when imported: a model whose query needs `db` is on its way here too. */
+const models = () => [
 	Analysis,
 	Animal,
 	AnimalProject,
@@ -85,7 +86,7 @@ const models = [
 
 /** Defines every model on `sequelize` and wires the relations that queries include. */
 export function associate(sequelize: Sequelize): void {
-	for (const model of models) model.define(sequelize);
+	for (const model of models()) model.define(sequelize);
 	Person.hasMany(RoleGrant, { as: 'roleGrants', foreignKey: 'personId' });
 	RoleGrant.belongsTo(Person, { as: 'person', foreignKey: 'personId' });
 	Animal.hasMany(AnimalProtocol, { as: 'protocols', foreignKey: 'animalId' });

@@ -4,9 +4,11 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { Person } from './person';
 import type { ExclusionReason } from '$lib/schemas/enumerations';
 
 /** A unit, bundle, session or day left out, and why. */
@@ -27,6 +29,7 @@ export class Exclusion extends Model<
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
 	declare withdrawnWhy: CreationOptional<string | null>;
+	declare person?: NonAttribute<Person>;
 
 	static define(sequelize: Sequelize): void {
 		Exclusion.init(

@@ -4,9 +4,12 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { Bundle } from './bundle';
+import type { Person } from './person';
 import type { SharpWave } from '$lib/schemas/enumerations';
 
 /** What was heard or seen on a bundle at its depth of the moment. */
@@ -30,6 +33,8 @@ export class Landmark extends Model<InferAttributes<Landmark>, InferCreationAttr
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
 	declare withdrawnWhy: CreationOptional<string | null>;
+	declare bundle?: NonAttribute<Bundle>;
+	declare person?: NonAttribute<Person>;
 
 	static define(sequelize: Sequelize): void {
 		Landmark.init(

@@ -4,9 +4,12 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { Bundle } from './bundle';
+import type { Person } from './person';
 import type { TallyMoment, TallySource } from '$lib/schemas/enumerations';
 
 /** A count of units on a bundle: a person's, or read off a sorting. */
@@ -29,6 +32,8 @@ export class Tally extends Model<InferAttributes<Tally>, InferCreationAttributes
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
 	declare withdrawnWhy: CreationOptional<string | null>;
+	declare bundle?: NonAttribute<Bundle>;
+	declare person?: NonAttribute<Person>;
 
 	static define(sequelize: Sequelize): void {
 		Tally.init(

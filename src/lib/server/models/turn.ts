@@ -9,7 +9,7 @@ import {
 	type Transaction
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
-import { Person } from './person';
+import type { Person } from './person';
 
 /** One entry of the ledger; corrections are later rows that replace it. */
 export class Turn extends Model<InferAttributes<Turn>, InferCreationAttributes<Turn>> {
@@ -28,7 +28,7 @@ export class Turn extends Model<InferAttributes<Turn>, InferCreationAttributes<T
 	static ofCarriages(carriageIds: string[], transaction?: Transaction): Promise<Turn[]> {
 		return Turn.findAll({
 			where: { carriageId: carriageIds },
-			include: { model: Person, as: 'person', attributes: ['name'] },
+			include: { association: 'person', attributes: ['name'] },
 			order: [
 				['doneAt', 'ASC'],
 				['id', 'ASC']

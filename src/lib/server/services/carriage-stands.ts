@@ -21,7 +21,15 @@ export interface CarriageFacts {
 	travelUm: number;
 	backlashUm: number;
 	smallestStepTurns: number;
-	bundles: { id: string; label: string; letter: string; startDepthUm: number }[];
+	bundles: BundleFacts[];
+}
+
+export interface BundleFacts {
+	id: string;
+	label: string;
+	/** Of the implant. */
+	letter: string;
+	startDepthUm: number;
 }
 
 /** Where screw, carriage and bundles stand at a moment. */
@@ -63,6 +71,14 @@ export async function carriagesOf(
 			(site.carriages ?? []).map((carriage) => factsOf(implant, site, carriage))
 		)
 	);
+}
+
+/** The animal's bundles, in the order of the screws. */
+export async function bundlesOf(
+	animalId: string,
+	transaction?: Transaction
+): Promise<BundleFacts[]> {
+	return (await carriagesOf(animalId, transaction)).flatMap(({ bundles }) => bundles);
 }
 
 function factsOf(implant: Implant, site: Site, carriage: Carriage): CarriageFacts {
