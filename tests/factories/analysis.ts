@@ -1,4 +1,5 @@
 import type { CreationAttributes } from 'sequelize';
+import { SESSION_DEFAULTS } from '$lib/analysis/session/parameters';
 import { Analysis } from '$lib/server/models/analysis';
 import { makeDataFile } from './data-file';
 import { makeSession } from './session';
@@ -14,7 +15,7 @@ export async function makeAnalysis(
 		sessionId,
 		sortingId: fields.sortingId ?? (await makeSorting({ sessionId })).id,
 		positionFileId: fields.positionFileId ?? file.id,
-		parameters: { defaults: 'session@1' },
+		parameters: { ...SESSION_DEFAULTS, arena: 'straight:300' },
 		positionSha256: file.sha256,
 		spikesSha256: file.sha256,
 		analysisVersion: 'session@1',

@@ -12,6 +12,13 @@ export const queues = {
 export type QueueName = keyof typeof queues;
 export type QueueData<Q extends QueueName> = z.infer<(typeof queues)[Q]>;
 
+const readers: { [Q in QueueName]: z.ZodType<QueueData<Q>> } = queues;
+
+/** What a job carries, checked: a job may be older than the code that reads it. */
+export function jobData<Q extends QueueName>(queue: Q, data: unknown): QueueData<Q> {
+	return readers[queue].parse(data);
+}
+
 export const queueNames = Object.keys(queues) as QueueName[];
 
 /** Retry and expiry rules; a job cut off by a killed worker is handed out again. */

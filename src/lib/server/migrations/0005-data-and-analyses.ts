@@ -75,9 +75,10 @@ CREATE TABLE unit (
 	spike_count integer NOT NULL CHECK (spike_count >= 0),
 	first_spike_s double precision,
 	last_spike_s double precision,
-	spikes bytea NOT NULL,
-	UNIQUE (sorting_id, label)
+	spikes bytea NOT NULL
 );
+-- Many labs number units within each bundle, so a label alone need not be one unit.
+CREATE UNIQUE INDEX unit_label_key ON unit (sorting_id, label, coalesce(bundle_label, ''));
 ALTER TABLE unit ALTER COLUMN spikes SET STORAGE EXTERNAL;
 CREATE TRIGGER unit_spikes_immutable BEFORE UPDATE OF spikes, label, sorting_id, spike_count ON unit
 	FOR EACH ROW WHEN (
@@ -91,6 +92,8 @@ CREATE TABLE analysis (
 	sorting_id uuid NOT NULL REFERENCES sorting,
 	position_file_id uuid NOT NULL REFERENCES data_file,
 	parameters jsonb NOT NULL,
+	-- Epochs, arena and its ends as they stood when asked: later edits of the session change nothing.
+	setup jsonb NOT NULL DEFAULT '{}',
 	position_sha256 text NOT NULL,
 	spikes_sha256 text NOT NULL,
 	analysis_version text NOT NULL,
@@ -127,7 +130,7 @@ BEGIN
 		RAISE EXCEPTION 'A finished analysis is kept as computed'
 			USING ERRCODE = 'restrict_violation', CONSTRAINT = 'analysis_immutable';
 	END IF;
-	IF NEW.parameters <> OLD.parameters OR NEW.session_id <> OLD.session_id
+	IF NEW.parameters <> OLD.parameters OR NEW.setup <> OLD.setup OR NEW.session_id <> OLD.session_id
 		OR NEW.sorting_id <> OLD.sorting_id OR NEW.position_file_id <> OLD.position_file_id THEN
 		RAISE EXCEPTION 'What an analysis was asked for stays as asked'
 			USING ERRCODE = 'restrict_violation', CONSTRAINT = 'analysis_immutable';

@@ -8,7 +8,9 @@ import {
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
 import type { AnalysisState } from '$lib/schemas/enumerations';
-import type { AnalysisFailure } from '$lib/schemas/data-state';
+import type { AnalysisFailure, AnalysisSetup } from '$lib/schemas/data-state';
+import type { AnalysisResult } from '$lib/analysis/session/analysis-result';
+import type { SessionParameters } from '$lib/analysis/session/parameters';
 
 /** One computation on named inputs; final once done. */
 export class Analysis extends Model<InferAttributes<Analysis>, InferCreationAttributes<Analysis>> {
@@ -16,7 +18,8 @@ export class Analysis extends Model<InferAttributes<Analysis>, InferCreationAttr
 	declare sessionId: string;
 	declare sortingId: string;
 	declare positionFileId: string;
-	declare parameters: Record<string, unknown>;
+	declare parameters: SessionParameters;
+	declare setup: CreationOptional<AnalysisSetup>;
 	declare positionSha256: string;
 	declare spikesSha256: string;
 	declare analysisVersion: string;
@@ -38,7 +41,7 @@ export class Analysis extends Model<InferAttributes<Analysis>, InferCreationAttr
 	declare medianErrorLowCm: CreationOptional<number | null>;
 	declare medianErrorHighCm: CreationOptional<number | null>;
 	declare chanceMedianErrorCm: CreationOptional<number | null>;
-	declare result: CreationOptional<unknown | null>;
+	declare result: CreationOptional<AnalysisResult | null>;
 	declare arraysSha256: CreationOptional<string | null>;
 
 	static define(sequelize: Sequelize): void {
@@ -49,6 +52,7 @@ export class Analysis extends Model<InferAttributes<Analysis>, InferCreationAttr
 				sortingId: { type: DataTypes.UUID, allowNull: false },
 				positionFileId: { type: DataTypes.UUID, allowNull: false },
 				parameters: { type: DataTypes.JSONB, allowNull: false },
+				setup: DataTypes.JSONB,
 				positionSha256: { type: DataTypes.TEXT, allowNull: false },
 				spikesSha256: { type: DataTypes.TEXT, allowNull: false },
 				analysisVersion: { type: DataTypes.TEXT, allowNull: false },

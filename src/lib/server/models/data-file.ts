@@ -8,7 +8,7 @@ import {
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
 import type { DataFormat, DataKind, DataState } from '$lib/schemas/enumerations';
-import type { DataRefusal } from '$lib/schemas/data-state';
+import type { DataReading, DataRefusal } from '$lib/schemas/data-state';
 
 /** An uploaded original, kept by its digest, and what was read from it. */
 export class DataFile extends Model<InferAttributes<DataFile>, InferCreationAttributes<DataFile>> {
@@ -20,7 +20,7 @@ export class DataFile extends Model<InferAttributes<DataFile>, InferCreationAttr
 	declare originalName: string;
 	declare format: DataFormat;
 	declare state: DataState;
-	declare reading: CreationOptional<Record<string, unknown>>;
+	declare reading: CreationOptional<DataReading>;
 	declare rowCount: CreationOptional<number | null>;
 	declare columns: CreationOptional<string[] | null>;
 	declare warnings: CreationOptional<string[]>;
