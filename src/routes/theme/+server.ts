@@ -1,8 +1,8 @@
+import { safePath } from '$lib/server/http/safe-path';
 import { themes } from '$lib/components/ui/tokens';
 import { redirect } from '@sveltejs/kit';
 import { z } from 'zod';
 import type { RequestHandler } from './$types';
-import { safePath } from './safe-path';
 
 const choice = z.object({ theme: z.enum(themes), to: z.string().nullish() });
 

@@ -30,11 +30,9 @@ export function themeColour(token: Token): string {
 /** Shows a theme at once and keeps it for the next page in the cookie. */
 export async function chooseTheme(theme: Theme, endpoint: string): Promise<void> {
 	document.documentElement.dataset.theme = theme;
-	await fetch(endpoint, {
-		method: 'POST',
-		headers: { accept: 'application/json' },
-		body: new URLSearchParams({ theme })
-	});
+	const body = new FormData();
+	body.set('theme', theme);
+	await fetch(endpoint, { method: 'POST', headers: { accept: 'application/json' }, body });
 }
 
 export function nextTheme(theme: Theme): Theme {

@@ -4,7 +4,7 @@ import { zod4 } from 'sveltekit-superforms/adapters';
 import { signInSchema } from '$lib/schemas/sign-in';
 import { action } from '$lib/server/http/answer';
 import { originOf } from '$lib/server/http/origin';
-import { safePath } from '../../theme/safe-path';
+import { safePath } from '$lib/server/http/safe-path';
 import * as signIns from '$lib/server/services/sign-ins';
 import type { Actions, PageServerLoad } from './$types';
 

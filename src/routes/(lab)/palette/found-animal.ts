@@ -1,0 +1,5 @@
+/** An animal as the keyboard palette lists it. */
+export interface FoundAnimal {
+	code: string;
+	detail: string;
+}
