@@ -12,7 +12,9 @@ export function makeThrowAwayHome(purpose: string): Home {
 	return openHome(folder);
 }
 
+/** Deletes a home of the temporary folder with its cluster; any other is somebody's and stays. */
 export function removeHome(home: Home): void {
+	if (!home.folder.startsWith(join(tmpdir(), 'quarterturn-'))) return;
 	const place = knownPlace(home);
 	if (place) rmSync(place.folder, { recursive: true, force: true });
 	rmSync(home.folder, { recursive: true, force: true });

@@ -1,5 +1,6 @@
 import { setTimeout as sleep } from 'node:timers/promises';
 import { tryLock } from '../bootstrap/lock.mjs';
+import { removeHome } from '../cluster/throw-away';
 import { CHECKOUT, openHome, type Home } from '../home/home';
 import { say } from '../machine/say';
 import { childEnv, type WebPlace } from './child-env';
@@ -40,6 +41,8 @@ export async function runLab(mode: Mode): Promise<number> {
 	const lock = await takeHome(home, mode.name);
 	if (!lock) return 0;
 
+	// For tests: faster, without safety on a power cut, and gone at the end.
+	const isThrowAway = process.env.QUARTERTURN_THROW_AWAY === '1';
 	const running: Stoppable[] = [];
 	const signals = listenForStop(() => {
 		for (const { kill } of running) kill();
@@ -47,7 +50,7 @@ export async function runLab(mode: Mode): Promise<number> {
 		process.exit(130);
 	});
 	try {
-		await startAll(mode, home, signals, running, lock.update);
+		await startAll({ mode, home, isThrowAway, signals, running, tell: lock.update });
 	} catch (error) {
 		if (!(error instanceof Stopped)) throw error;
 	} finally {
@@ -56,19 +59,25 @@ export async function runLab(mode: Mode): Promise<number> {
 		await Promise.all(users.map((part) => part.stop()));
 		await database?.stop();
 		lock.release();
+		if (isThrowAway) removeHome(home);
 	}
 	// A step that was cut short (a build, a filling) must not hold the process up.
 	process.exit(0);
 }
 
-async function startAll(
-	mode: Mode,
-	home: Home,
-	signals: StopSignals,
-	running: Stoppable[],
-	tell: (note: Record<string, string>) => void
-): Promise<void> {
-	/** Each step ends early when a stop is asked for; what has been started is stopped by the caller. */
+interface Run {
+	mode: Mode;
+	home: Home;
+	isThrowAway: boolean;
+	signals: StopSignals;
+	/** What has been started, the database first; the caller stops it. */
+	running: Stoppable[];
+	/** Writes beside the lock what others may know. */
+	tell: (note: Record<string, string>) => void;
+}
+
+async function startAll({ mode, home, isThrowAway, signals, running, tell }: Run): Promise<void> {
+	/** Ends early when a stop is asked for. */
 	const step = <T>(work: Promise<T>): Promise<T> =>
 		Promise.race([
 			work,
@@ -77,7 +86,7 @@ async function startAll(
 			})
 		]);
 
-	const database = await step(openDatabase(home, process.env.QUARTERTURN_THROW_AWAY === '1'));
+	const database = await step(openDatabase(home, isThrowAway));
 	running.push(database);
 	await step(bringUpToDate(home, database));
 
