@@ -37,9 +37,6 @@ export class Unauthenticated extends Refusal {
 /** The record stands otherwise than the writer believed, or a rule of the record forbids it. */
 export class Conflict extends Refusal {
 	readonly status = 409;
-	constructor(code: string, message: string, options?: ErrorOptions) {
-		super(code, message, options);
-	}
 }
 
 /** Somebody changed the row since the writer read it. `what` as in a sentence: "animal". */

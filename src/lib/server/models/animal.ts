@@ -4,9 +4,15 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { AnimalProject } from './animal-project';
+import type { AnimalProtocol } from './animal-protocol';
+import type { Implant } from './implant';
+import type { Session } from './session';
+import type { Weight } from './weight';
 import type { AnimalStatus, Sex, Species } from '$lib/schemas/enumerations';
 
 /** One animal under its code. */
@@ -27,6 +33,11 @@ export class Animal extends Model<InferAttributes<Animal>, InferCreationAttribut
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
 	declare withdrawnWhy: CreationOptional<string | null>;
+	declare protocols?: NonAttribute<AnimalProtocol[]>;
+	declare projects?: NonAttribute<AnimalProject[]>;
+	declare weights?: NonAttribute<Weight[]>;
+	declare implants?: NonAttribute<Implant[]>;
+	declare sessions?: NonAttribute<Session[]>;
 
 	static define(sequelize: Sequelize): void {
 		Animal.init(

@@ -4,9 +4,11 @@ import {
 	type CreationOptional,
 	type InferAttributes,
 	type InferCreationAttributes,
+	type NonAttribute,
 	type Sequelize
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
+import type { Person } from './person';
 
 /** One weighing; net of the implant. */
 export class Weight extends Model<InferAttributes<Weight>, InferCreationAttributes<Weight>> {
@@ -23,6 +25,7 @@ export class Weight extends Model<InferAttributes<Weight>, InferCreationAttribut
 	declare withdrawnAt: CreationOptional<Date | null>;
 	declare withdrawnBy: CreationOptional<string | null>;
 	declare withdrawnWhy: CreationOptional<string | null>;
+	declare measurer?: NonAttribute<Person>;
 
 	static define(sequelize: Sequelize): void {
 		Weight.init(

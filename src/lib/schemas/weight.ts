@@ -1,0 +1,14 @@
+import { z } from 'zod';
+import { figureOf, textOf } from './field-rules';
+import { momentSchema } from './moment';
+
+/** A weighing as the scale shows it, implant and all. */
+export const weightSchema = z.object({
+	measuredAt: momentSchema.nullable().default(null),
+	grossG: figureOf(1, 5000, 'g'),
+	/** Left out: the sum of the implants the animal carries on that day. */
+	implantMassG: figureOf(0, 500, 'g').nullable().default(null),
+	note: textOf(500)
+});
+
+export type WeightInput = z.input<typeof weightSchema>;
