@@ -4,6 +4,7 @@ import { pathToFileURL } from 'node:url';
 import { withClient } from '../cluster/roles';
 import { CHECKOUT } from '../home/home';
 import { say } from '../machine/say';
+import { closeConnections, openConnections } from './connections';
 import type { DemoSignIn } from './greeting';
 
 /** A part of the application that this process runs itself, with the settings its children get. */
@@ -14,18 +15,12 @@ async function load<T>(path: string, env: NodeJS.ProcessEnv): Promise<T | undefi
 	return (await import(pathToFileURL(file).href)) as T;
 }
 
-async function closeConnections(): Promise<void> {
-	const { closeQueue } = await import('$lib/server/jobs/enqueue');
-	const { closeDb } = await import('$lib/server/db');
-	await closeQueue();
-	await closeDb();
-}
-
 export async function fillDemo(env: NodeJS.ProcessEnv): Promise<void> {
 	const demo = await load<{ default: () => Promise<void> }>('src/demo/fill.ts', env);
 	if (!demo) return say('There is no demo lab in this version; the lab stays empty.');
 	say('Filling the demo lab with simulated data …');
 	try {
+		await openConnections();
 		await demo.default();
 	} finally {
 		await closeConnections();
@@ -45,12 +40,11 @@ export async function demoSignIns(ownerUrl: string): Promise<DemoSignIn[]> {
 
 /** The address at which the first PI of an empty lab is made; undefined once there are people. */
 export async function firstAddress(env: NodeJS.ProcessEnv): Promise<string | undefined> {
-	const people = await load<{ firstAddress?: () => Promise<string | null> }>(
-		'src/lib/server/services/people.ts',
-		env
-	);
+	Object.assign(process.env, env);
+	const people = await import('$lib/server/services/people');
 	try {
-		return (await people?.firstAddress?.()) ?? undefined;
+		await openConnections();
+		return (await people.firstAddress()) ?? undefined;
 	} finally {
 		await closeConnections();
 	}
