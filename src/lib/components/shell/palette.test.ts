@@ -3,10 +3,10 @@ import { filterItems, rowAfterKey, type PaletteItem } from './palette';
 
 const items: PaletteItem[] = [
 	{ label: 'Today', detail: 'Page', href: '/' },
-	{ label: 'Animals', detail: 'Page', href: '/animals' },
-	{ label: 'R031', detail: 'Long-Evans, male', href: '/animals' },
-	{ label: 'M112', detail: 'Mus musculus', href: '/animals' },
-	{ label: 'Ánimal facility', detail: 'Page', href: '/lab' }
+	{ label: 'Animals', detail: 'Page', href: '/' },
+	{ label: 'R031', detail: 'Long-Evans, male', href: '/' },
+	{ label: 'M112', detail: 'Mus musculus', href: '/' },
+	{ label: 'Ánimal facility', detail: 'Page', href: '/' }
 ];
 
 const labels = (query: string) => filterItems(items, query).map((item) => item.label);
