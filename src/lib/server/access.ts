@@ -49,6 +49,7 @@ export const PERMISSIONS = {
 	'members.write': ['pi', 'admin'],
 	'tokens.others': ['pi', 'admin'],
 	'mail.read': ['pi', 'admin'],
+	'mail.write': ['pi', 'admin'],
 	'jobs.read': ['pi', 'admin'],
 	'jobs.write': ['pi', 'admin'],
 	'log.read': ['pi', 'admin'],

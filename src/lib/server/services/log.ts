@@ -1,5 +1,6 @@
 import { demand, type Actor } from '$lib/server/access';
-import { LogRow, type LogEntry, type LogFilter } from '$lib/server/models/log-row';
+import * as logRows from '$lib/server/models/log-row';
+import type { LogEntry, LogFilter } from '$lib/server/models/log-row';
 
 export interface LogPage {
 	items: LogEntry[];
@@ -22,7 +23,7 @@ const PAGE = 50;
 /** The newest first. */
 export async function page(by: Actor | null, filter: LogFilter = {}): Promise<LogPage> {
 	demand(by, 'log.read');
-	const rows = await LogRow.newest(filter, PAGE + 1);
+	const rows = await logRows.newest(filter, PAGE + 1);
 	const items = rows.slice(0, PAGE);
 	return { items, next: rows.length > PAGE ? items[PAGE - 1].id : null };
 }
@@ -30,7 +31,7 @@ export async function page(by: Actor | null, filter: LogFilter = {}): Promise<Lo
 /** Kinds of subject that occur, for the filter. */
 export async function kinds(by: Actor | null): Promise<string[]> {
 	demand(by, 'log.read');
-	return LogRow.kinds();
+	return logRows.kinds();
 }
 
 /**
@@ -41,7 +42,7 @@ export async function kinds(by: Actor | null): Promise<string[]> {
  */
 export async function verify(by: Actor | null, last?: number): Promise<Verdict> {
 	demand(by, 'log.read');
-	const { checked, isWhole, faultId, fault } = await LogRow.verify(last ?? null);
+	const { checked, isWhole, faultId, fault } = await logRows.verify(last ?? null);
 	const why = {
 		number: 'a row before it is missing',
 		chain: 'it does not follow from the row before it',

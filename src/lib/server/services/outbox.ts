@@ -74,7 +74,7 @@ export async function list(
 
 /** Sends a dead mail again, with all its attempts before it. */
 export async function retry(by: Actor | null, id: string): Promise<void> {
-	demand(by, 'mail.read');
+	demand(by, 'mail.write');
 	await record(by, async (w) => {
 		const mail = await Outbox.findByPk(id, { transaction: w.t, lock: true });
 		if (!mail) throw new NotFound();
