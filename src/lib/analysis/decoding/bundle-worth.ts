@@ -1,6 +1,6 @@
 import type { Fold } from './folds';
 import { addSpikeEvidence } from './log-likelihood';
-import { normalise } from './normalise';
+import { normaliserOfDifference } from './normalise';
 import type { RateModel } from './rate-model';
 import type { WindowCounts } from './window-counts';
 
@@ -15,7 +15,7 @@ export interface Without {
 }
 
 /** Largest number of (window, place, bundle or spiking unit) steps; beyond it every k-th window is used. */
-const MOST_STEPS = 6e8;
+const MOST_STEPS = 2e8;
 
 /** The windows that a repeated decoding looks at: all, or evenly spaced ones when that costs too much. */
 export function everyWindow(windows: number, stepsPerWindow: number): Int32Array {
@@ -46,25 +46,30 @@ export function decodeWithoutBundles(
 	let k = 0;
 	folds.forEach((fold, f) => {
 		const model = models[f];
-		const parts = model ? bundleTotals(model, bundleOf, bundles, windowS) : null;
+		if (!model) {
+			while (k < looked.length && looked[k] < fold.to) k++;
+			return;
+		}
+		const parts = bundleTotals(model, bundleOf, bundles, windowS);
+		const own = parts.map((part) => part.slice());
+		const all = new Float64Array(model.bin.length);
+		const nothing = new Float64Array(model.bin.length);
 		for (; k < looked.length && looked[k] < fold.to; k++) {
-			if (!model || !parts) continue;
-			const own = Array.from(parts, (part) => part.slice());
-			const all = model.logPrior.slice();
-			for (let b = 0; b <= bundles; b++) {
+			all.set(model.logPrior);
+			own.forEach((evidence, b) => {
 				const cell = k * (bundles + 1) + b;
 				const { first, unit, spikes } = grouped;
-				addSpikeEvidence(own[b], model, unit, spikes, first[cell], first[cell + 1]);
-				for (let p = 0; p < all.length; p++) all[p] += own[b][p];
-			}
-			const posterior = new Float64Array(all.length);
+				evidence.set(parts[b]);
+				addSpikeEvidence(evidence, model, unit, spikes, first[cell], first[cell + 1]);
+				for (let p = 0; p < all.length; p++) all[p] += evidence[p];
+			});
 			const place = model.placeOfBin[trueBin[looked[k]]];
-			const logAll = place < 0 ? NaN : all[place] - normalise(all, posterior).logTotal;
+			const logAll = place < 0 ? NaN : all[place] - normaliserOfDifference(all, nothing).logTotal;
 			for (let b = 0; b < bundles; b++) {
-				for (let p = 0; p < all.length; p++) own[b][p] = all[p] - own[b][p];
-				const { best, logTotal } = normalise(own[b], posterior);
+				const { best, logTotal } = normaliserOfDifference(all, own[b]);
+				const logWithout = place < 0 ? NaN : all[place] - own[b][place] - logTotal;
 				bin[b][k] = model.bin[best];
-				bits[b][k] = place < 0 ? NaN : (logAll - (own[b][place] - logTotal)) * Math.LOG2E;
+				bits[b][k] = (logAll - logWithout) * Math.LOG2E;
 			}
 		}
 	});

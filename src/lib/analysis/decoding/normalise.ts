@@ -20,6 +20,32 @@ export function normalise(
 		out[p] = below > -NEGLIGIBLE ? Math.exp(below) : 0;
 		sum += out[p];
 	}
-	for (let p = 0; p < out.length; p++) out[p] /= sum;
+	const scale = 1 / sum;
+	for (let p = 0; p < out.length; p++) out[p] *= scale;
+	return { best, logTotal: top + Math.log(sum) };
+}
+
+/**
+ * Place of the largest of `a − b` (lowest in a tie) and ln Σ exp(a − b), without keeping either.
+ * @param b same length as a
+ */
+export function normaliserOfDifference(
+	a: Float64Array,
+	b: Float64Array
+): { best: number; logTotal: number } {
+	let best = 0;
+	let top = -Infinity;
+	for (let p = 0; p < a.length; p++) {
+		const value = a[p] - b[p];
+		if (value > top) {
+			top = value;
+			best = p;
+		}
+	}
+	let sum = 0;
+	for (let p = 0; p < a.length; p++) {
+		const below = a[p] - b[p] - top;
+		if (below > -NEGLIGIBLE) sum += Math.exp(below);
+	}
 	return { best, logTotal: top + Math.log(sum) };
 }

@@ -1,7 +1,7 @@
 import type { Bins } from '../arena/bins';
 import type { Metric } from '../arena/metric';
 import { gaussianKernel } from '../maps/gaussian-kernel';
-import { lineSmoother } from '../maps/smooth-line';
+import { gridSmoother } from '../maps/smooth-line';
 
 /** Carries a belief over places one step on: reads and writes one probability per place. */
 export type Walk = (belief: Float64Array) => void;
@@ -46,20 +46,15 @@ function lineWalk(bins: Bins, bin: Int32Array, metric: Metric, sigmaCm: number):
 
 function gridWalk(bins: Bins, bin: Int32Array, sigmaCm: number): Walk {
 	const weights = gaussianKernel(sigmaCm / bins.binCm);
-	const along = lineSmoother(bins.binsX, weights, 'zero');
-	const across = lineSmoother(bins.binsY, weights, 'zero');
-	const spread = (grid: Float64Array) => {
-		for (let row = 0; row < bins.binsY; row++) along(grid, grid, row * bins.binsX, 1);
-		for (let column = 0; column < bins.binsX; column++) across(grid, grid, column, bins.binsX);
-	};
+	const spread = gridSmoother(bins.binsX, bins.binsY, weights, 'zero');
 	const rowSum = new Float64Array(bins.count);
 	for (const k of bin) rowSum[k] = 1;
-	spread(rowSum);
+	spread(rowSum, rowSum);
 	const grid = new Float64Array(bins.count);
 	return (belief) => {
 		grid.fill(0);
 		for (let p = 0; p < bin.length; p++) grid[bin[p]] = belief[p] / rowSum[bin[p]];
-		spread(grid);
+		spread(grid, grid);
 		for (let p = 0; p < bin.length; p++) belief[p] = grid[bin[p]];
 	};
 }

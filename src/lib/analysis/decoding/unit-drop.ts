@@ -35,12 +35,13 @@ export function decodeSubsets(
 	folds.forEach((fold, f) => {
 		const model = models[f];
 		const silent = model ? silentEvidence(model, stepOfUnit, sizes.length, windowS) : [];
+		const evidence = new Float64Array(model?.bin.length ?? 0);
 		for (; k < looked.length && looked[k] < fold.to; k++) {
 			if (!model) continue;
 			const from = counts.first[looked[k]];
 			const to = counts.first[looked[k] + 1];
 			const { unit, spikes, first } = sorted(counts, from, to, stepOfUnit, sizes.length);
-			const evidence = model.logPrior.slice();
+			evidence.set(model.logPrior);
 			for (let s = 0; s < sizes.length; s++) {
 				addSpikeEvidence(evidence, model, unit, spikes, first[s], first[s + 1]);
 				answers[s][k] = model.bin[bestPlace(evidence, silent[s])];

@@ -4,7 +4,7 @@ export interface KeptTime {
 	readonly cellS: number;
 	readonly cells: number;
 	/** Bin of every cell, twice in a row, so that a shifted cell needs no remainder. */
-	readonly binTwice: Int32Array;
+	readonly binTwice: Uint16Array | Int32Array;
 	/** Where each sample begins on the axis, s. */
 	readonly startS: Float64Array;
 }
@@ -28,7 +28,8 @@ export function keptTime(
 	}
 	const cells = Math.round(lengthS / wantedCellS);
 	const cellS = cells > 0 ? lengthS / cells : NaN;
-	const binTwice = new Int32Array(2 * cells).fill(-1);
+	const most = bin.reduce((top, k) => Math.max(top, k), 0);
+	const binTwice = most < 65_536 ? new Uint16Array(2 * cells) : new Int32Array(2 * cells);
 	let i = 0;
 	for (let cell = 0; cell < cells; cell++) {
 		const middleS = (cell + 0.5) * cellS;

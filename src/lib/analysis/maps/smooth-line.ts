@@ -13,36 +13,87 @@ function beyond(k: number, count: number, edge: EdgeRule): number {
 	return within < count ? within : 2 * count - 1 - within;
 }
 
+/** Reads lines of `from`, writes them smoothed to `to`, which may be the same array. */
+export type LineSmoother = (from: Float64Array, to: Float64Array) => void;
+
 /**
- * A smoother of lines of `count` bins that lie `stride` apart in a flat array. Line by line it
- * copies the bins into a padded buffer, so the inner loop has no edge to test for.
+ * A smoother of `lines` lines of `count` bins in a flat array; neighbouring bins lie `stride` apart,
+ * the beginnings of neighbouring lines `between`.
+ * Lines are copied into padded buffers, so the inner loop has no edge to test for, and four lines
+ * are smoothed at once, so that each weight is read once for four bins.
  * @param weights odd length, symmetric
- * @returns reads `from`, writes `to` (may be the same array) beginning at `offset`
- * Cost: O(count · weights) per line.
+ * Cost: O(lines · count · weights).
  */
 export function lineSmoother(
-	count: number,
+	{ count, lines, stride, between }: LineLayout,
 	weights: Float64Array,
 	edge: EdgeRule
-): (from: Float64Array, to: Float64Array, offset: number, stride: number) => void {
+): LineSmoother {
 	const reach = (weights.length - 1) / 2;
-	const padded = new Float64Array(count + 2 * reach);
-	const sources: { at: number; bin: number }[] = [];
-	for (let at = 0; at < padded.length; at++) {
+	const half = weights.slice(reach);
+	const width = count + 2 * reach;
+	// Four lines side by side: bin k of line l stands at 4 k + l.
+	const padded = new Float64Array(4 * width);
+	const pads: { at: number; bin: number }[] = [];
+	for (let at = 0; at < width; at++) {
 		const isPad = at < reach || at >= reach + count;
 		const bin = isPad ? beyond(at - reach, count, edge) : -1;
-		if (bin >= 0) sources.push({ at, bin });
+		if (bin >= 0) pads.push({ at: 4 * at, bin: 4 * (reach + bin) });
 	}
-	return (from, to, offset, stride) => {
-		for (let k = 0, at = offset; k < count; k++, at += stride) padded[reach + k] = from[at];
-		for (const { at, bin } of sources) padded[at] = padded[reach + bin];
-		for (let k = 0, at = offset; k < count; k++, at += stride) {
-			const middle = k + reach;
-			let sum = weights[reach] * padded[middle];
-			for (let j = 1; j <= reach; j++) {
-				sum += weights[reach + j] * (padded[middle - j] + padded[middle + j]);
+	return (from, to) => {
+		for (let line = 0; line < lines; line += 4) {
+			const together = Math.min(4, lines - line);
+			for (let l = 0; l < together; l++) {
+				let at = (line + l) * between;
+				for (let k = 4 * reach + l; k < 4 * (reach + count); k += 4, at += stride) {
+					padded[k] = from[at];
+				}
 			}
-			to[at] = sum;
+			for (const { at, bin } of pads) padded.copyWithin(at, bin, bin + 4);
+			for (let k = 0; k < count; k++) {
+				const middle = 4 * (k + reach);
+				let a = half[0] * padded[middle];
+				let b = half[0] * padded[middle + 1];
+				let c = half[0] * padded[middle + 2];
+				let d = half[0] * padded[middle + 3];
+				for (let j = 1, low = middle - 4, high = middle + 4; j <= reach; j++, low -= 4, high += 4) {
+					const weight = half[j];
+					a += weight * (padded[low] + padded[high]);
+					b += weight * (padded[low + 1] + padded[high + 1]);
+					c += weight * (padded[low + 2] + padded[high + 2]);
+					d += weight * (padded[low + 3] + padded[high + 3]);
+				}
+				const at = line * between + k * stride;
+				to[at] = a;
+				if (together > 1) to[at + between] = b;
+				if (together > 2) to[at + 2 * between] = c;
+				if (together > 3) to[at + 3 * between] = d;
+			}
 		}
+	};
+}
+
+/** Where the lines of a flat array lie. */
+export interface LineLayout {
+	readonly count: number;
+	readonly lines: number;
+	readonly stride: number;
+	readonly between: number;
+}
+
+/** Smooths the rows and then the columns of a row-major grid. */
+export function gridSmoother(
+	binsX: number,
+	binsY: number,
+	weights: Float64Array,
+	edge: EdgeRule
+): LineSmoother {
+	const rows = { count: binsX, lines: binsY, stride: 1, between: binsX };
+	const columns = { count: binsY, lines: binsX, stride: binsX, between: 1 };
+	const along = lineSmoother(rows, weights, edge);
+	const across = lineSmoother(columns, weights, edge);
+	return (from, to) => {
+		along(from, to);
+		across(to, to);
 	};
 }

@@ -2,7 +2,7 @@ import type { Arena } from '../arena/arena';
 import type { Bins } from '../arena/bins';
 import { metricOf } from '../arena/metric';
 import { CUT_SIGMAS, gaussianKernel } from './gaussian-kernel';
-import { lineSmoother, type EdgeRule } from './smooth-line';
+import { gridSmoother, lineSmoother, type EdgeRule } from './smooth-line';
 
 /** Smooths one map: reads `from`, writes `to`; both have one value per bin and may be the same. */
 export type Smoother = (from: Float64Array, to: Float64Array) => void;
@@ -19,13 +19,9 @@ export function smootherOf(arena: Arena, bins: Bins, sigmaCm: number, edge: Edge
 	const weights = gaussianKernel(sigmaCm / bins.binCm);
 	if (weights.length === 1) return (from, to) => void to.set(from);
 	if (arena.kind === 'tree') return treeSmoother(arena, bins, sigmaCm);
-	const along = lineSmoother(bins.binsX, weights, bins.isRing ? 'wrap' : edge);
-	if (bins.dimensions === 1) return (from, to) => along(from, to, 0, 1);
-	const across = lineSmoother(bins.binsY, weights, edge);
-	return (from, to) => {
-		for (let row = 0; row < bins.binsY; row++) along(from, to, row * bins.binsX, 1);
-		for (let column = 0; column < bins.binsX; column++) across(to, to, column, bins.binsX);
-	};
+	if (bins.dimensions === 2) return gridSmoother(bins.binsX, bins.binsY, weights, edge);
+	const line = { count: bins.binsX, lines: 1, stride: 1, between: 0 };
+	return lineSmoother(line, weights, bins.isRing ? 'wrap' : edge);
 }
 
 function treeSmoother(arena: Arena, bins: Bins, sigmaCm: number): Smoother {

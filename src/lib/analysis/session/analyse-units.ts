@@ -15,9 +15,6 @@ import type { Ground, Path, UnitSpikes } from './prepared';
 import { figure, type MapResult, type UnitResult } from './result';
 import { halves, oddAndEven, usedWhere } from './sample-masks';
 
-/** Cells per tracker sample on the axis of kept time. */
-const CELLS_PER_SAMPLE = 4;
-
 /**
  * Maps of all units over the used samples, and every figure of the result that is of one unit.
  * @param onUnit told the number of units done
@@ -46,12 +43,7 @@ export function analyseUnits(
 	const around = neighboursOf(arena, bins, true);
 	const rule = fieldRule(bins);
 	const counts = new Float64Array(bins.count);
-	const kept = keptTime(
-		path.bin,
-		path.standS,
-		path.isUsed,
-		path.medianIntervalS / CELLS_PER_SAMPLE
-	);
+	const kept = keptTime(path.bin, path.standS, path.isUsed, path.medianIntervalS);
 	const shifts = drawShifts(kept, parameters.shuffles, seeded(parameters.seed, 'shift'));
 	const bits = smoothedInformation(maps.occupancyS, ground.smooth, ground.minOccupancyS);
 	const describe = (from: UnitMaps, isUsed: Uint8Array, u: number): MapResult => {

@@ -2,8 +2,8 @@ import { medianInterval } from '../position/median-interval';
 import { TableError } from '../tables/table-error';
 import type { SessionInput } from './input';
 
-/** No tracker is this slow; a longer step means that times are not in seconds. */
-const SLOWEST_S = 5;
+/** No tracker is this slow; such a step means that times are not in seconds. */
+const SLOWEST_S = 1;
 /** Seconds that a path must last to say anything. */
 const LEAST_DURATION_S = 1;
 
@@ -39,7 +39,7 @@ export function checkPath(position: SessionInput['position'], warnings: string[]
 		);
 	}
 	const stepS = medianInterval(tS);
-	if (stepS > SLOWEST_S) {
+	if (stepS >= SLOWEST_S) {
 		throw new TableError(
 			'position',
 			'unit-of-time',
@@ -78,26 +78,37 @@ function checkOrder({ tS, xCm, yCm, firstRow = 2 }: SessionInput['position']): n
  * @throws TableError
  */
 export function checkSpikes(units: SessionInput['units'], firstS: number, lastS: number): void {
-	let spikes = 0;
-	let from = Infinity;
-	let to = -Infinity;
-	let isInside = false;
-	for (const { timesS } of units) {
-		if (timesS.length === 0) continue;
-		spikes += timesS.length;
-		from = Math.min(from, timesS[0]);
-		to = Math.max(to, timesS[timesS.length - 1]);
-		isInside ||= timesS.some((time) => time >= firstS && time <= lastS);
-	}
-	if (spikes === 0) throw new TableError('spikes', 'no-spikes', 'the table holds no spike');
-	if (isInside) return;
-	const perMs = from / 1000 <= lastS && to / 1000 >= firstS;
-	const hint = perMs
-		? 'they would fit as milliseconds; give them in seconds'
-		: 'are both on the recorder’s clock?';
-	throw new TableError(
-		'spikes',
-		perMs ? 'unit-of-time' : 'no-overlap',
-		`spikes from ${from} to ${to} s and positions from ${firstS} to ${lastS} s share no moment; ${hint}`
+	const all = units.reduce((sum, { timesS }) => sum + timesS.length, 0);
+	if (all === 0) throw new TableError('spikes', 'no-spikes', 'the table holds no spike');
+	const between = (from: number, to: number) =>
+		units.reduce((sum, { timesS }) => sum + below(timesS, to) - below(timesS, from), 0);
+	const inside = between(firstS, lastS);
+	const from = units.reduce(
+		(least, { timesS: [first = Infinity] }) => Math.min(least, first),
+		Infinity
 	);
+	const to = units.reduce(
+		(most, { timesS }) => Math.max(most, timesS.at(-1) ?? -Infinity),
+		-Infinity
+	);
+	const range = `spikes from ${from} to ${to} s and positions from ${firstS} to ${lastS} s`;
+	if (inside < all / 100 && between(firstS * 1000, lastS * 1000) > all / 4) {
+		const reason = `${range}: these spikes would fit as milliseconds; give them in seconds`;
+		throw new TableError('spikes', 'unit-of-time', reason);
+	}
+	if (inside > 0) return;
+	const reason = `${range} share no moment; are both on the recorder’s clock?`;
+	throw new TableError('spikes', 'no-overlap', reason);
+}
+
+/** How many of the ascending times lie below a limit. */
+function below(timesS: Float64Array, limitS: number): number {
+	let low = 0;
+	let high = timesS.length;
+	while (low < high) {
+		const middle = (low + high) >> 1;
+		if (timesS[middle] < limitS) low = middle + 1;
+		else high = middle;
+	}
+	return low;
 }

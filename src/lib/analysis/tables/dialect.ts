@@ -38,6 +38,8 @@ function delimiterOf(header: string): Dialect['delimiter'] {
 	return bare.includes(';') ? ';' : ',';
 }
 
+/** Lines that decide how a table is written. */
+const LOOKED_AT = 200;
 const COMMA_NUMBER = /^[+-]?\d*,\d+([eE][+-]?\d+)?$/;
 
 /** A comma is the decimal mark when it does not separate and stands in a number of the first rows. */
@@ -60,8 +62,8 @@ export interface Beginning {
  * @throws TableError when there is no header: nothing at all, or numbers in its place
  */
 export function readBeginning(table: TableKind, text: string, isWhole: boolean): Beginning {
-	const lines = text.replace(/^\uFEFF/, '').split(/\r?\n/);
-	if (!isWhole) lines.pop();
+	const lines = text.replace(/^\uFEFF/, '').split(/\r?\n/, LOOKED_AT);
+	if (!isWhole && lines.length < LOOKED_AT) lines.pop();
 	const [first = '', ...rest] = lines;
 	if (first.trim() === '') {
 		throw new TableError(table, 'empty', 'the file is empty or begins with an empty line', 1);
@@ -84,7 +86,7 @@ export function readBeginning(table: TableKind, text: string, isWhole: boolean):
 	const rows = rest.filter((line) => line.trim() !== '').map((line) => splitLine(line, delimiter));
 	return {
 		header,
-		dialect: { delimiter, decimal: decimalOf(delimiter, rows.slice(0, 200)) },
+		dialect: { delimiter, decimal: decimalOf(delimiter, rows) },
 		rows
 	};
 }

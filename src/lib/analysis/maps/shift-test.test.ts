@@ -1,0 +1,113 @@
+import { describe, expect, it } from 'vitest';
+import { referenceCase, worstDifference } from '../../../../tests/factories/reference';
+import { binsOf } from '../arena/bins';
+import { parseArena } from '../arena/parse-arena';
+import { seeded } from '../random/seeded';
+import { samplesOfSpikes } from '../spikes/samples-of-spikes';
+import { information } from './information';
+import { keptTime, spikeCells } from './kept-time';
+import { occupancyInto } from './occupancy';
+import { rateMapper } from './rate-map';
+import { rawRates } from './raw-rates';
+import { drawShifts, shiftTest } from './shift-test';
+import { smoothedInformation } from './smoothed-information';
+import { smootherOf } from './smoother';
+
+function evenTime(bin: readonly number[], dt: number, cellS: number) {
+	const standS = new Float64Array(bin.length).fill(dt);
+	return keptTime(Int32Array.from(bin), standS, new Uint8Array(bin.length).fill(1), cellS);
+}
+
+describe('shiftTest', () => {
+	it('equals numpy for every listed shift, and counts p as (b + 1)/(m + 1)', () => {
+		const { input, expected } = referenceCase<
+			{
+				dt: number;
+				x: number[];
+				spikeTimes: number[];
+				T: number;
+				binCm: number;
+				length: number;
+				shiftsS: number[];
+			},
+			{ observedBitsPerSpike: number; nullBitsPerSpike: number[]; p: number; nullMean: number }
+		>('05_shuffle.json', 'circular_shift_information');
+		const bins = binsOf(parseArena(`straight:${input.length}`), input.binCm);
+		const bin = input.x.map((x) => bins.of(x, NaN));
+		const n = bin.length;
+		const all = new Uint8Array(n).fill(1);
+		const tS = Float64Array.from({ length: n }, (_, i) => i * input.dt);
+		const standS = new Float64Array(n).fill(input.dt);
+		const occupancyS = new Float64Array(bins.count);
+		occupancyInto(occupancyS, Int32Array.from(bin), standS, all);
+		const bits = (counts: Float64Array) =>
+			information(rawRates(counts, occupancyS, 1e-9), occupancyS).bitsPerSpike;
+		// Shifts of the fixture end in half a millisecond: cells of that length make them whole.
+		const cellS = 0.0005;
+		const kept = evenTime(bin, input.dt, cellS);
+		const spikes = Float64Array.from(input.spikeTimes, (t) => t + 1e-7);
+		const samples = samplesOfSpikes(
+			spikes,
+			tS,
+			standS.map((s) => s * 1.001)
+		);
+		const cells = spikeCells(kept, spikes, samples, tS, all);
+		const shifts = Int32Array.from(input.shiftsS, (shift) => Math.round(shift / cellS));
+		const test = shiftTest(kept, cells, shifts, bins.count, expected.observedBitsPerSpike, bits);
+		const unshifted = shiftTest(kept, cells, Int32Array.of(0), bins.count, NaN, bits);
+		expect(unshifted.nullValues[0]).toBeCloseTo(expected.observedBitsPerSpike, 9);
+		expect(worstDifference(test.nullValues, expected.nullBitsPerSpike)).toBeLessThan(1e-9);
+		expect(test.p).toBe(expected.p);
+		expect(test.nullMean).toBeCloseTo(expected.nullMean, 9);
+	});
+
+	it('never reports p = 0 (Phipson and Smyth 2010)', () => {
+		const kept = evenTime(Array<number>(2000).fill(0), 0.1, 0.1);
+		const values = Float64Array.from({ length: 1000 }, (_, m) => (m < 12 ? 1 : 0));
+		let m = 0;
+		const figure = () => values[m++];
+		const shifts = new Int32Array(1000).fill(300);
+		expect(shiftTest(kept, Int32Array.of(1), shifts, 1, 1, figure).p).toBeCloseTo(0.012987013, 9);
+		const few = shiftTest(kept, Int32Array.of(1), shifts.subarray(0, 99), 1, 5, () => 0);
+		expect(few.p).toBe(0.01);
+	});
+
+	it('draws shifts at least 20 s from none, and none in under a minute', () => {
+		const kept = evenTime(Array<number>(1000).fill(0), 0.125, 0.125);
+		const shifts = drawShifts(kept, 8000, seeded(1));
+		expect(Math.min(...shifts)).toBe(160);
+		expect(Math.max(...shifts)).toBe(840);
+		const short = evenTime(Array<number>(479).fill(0), 0.125, 0.125);
+		expect(drawShifts(short, 50, seeded(1))).toHaveLength(0);
+	});
+});
+
+describe('keptTime', () => {
+	it('closes up what does not count', () => {
+		const bin = Int32Array.of(1, 2, 3, 4);
+		const kept = keptTime(bin, new Float64Array(4).fill(0.5), Uint8Array.of(1, 0, 1, 1), 0.25);
+		expect(kept.lengthS).toBe(1.5);
+		expect([...kept.binTwice]).toEqual([1, 1, 3, 3, 4, 4, 1, 1, 3, 3, 4, 4]);
+	});
+});
+
+describe('smoothedInformation', () => {
+	it('equals the information of the map it never keeps', () => {
+		const arena = parseArena('rectangle:40x30');
+		const bins = binsOf(arena, 5);
+		const smooth = smootherOf(arena, bins, 5, 'zero');
+		const random = seeded(11);
+		const occupancyS = Float64Array.from(
+			{ length: bins.count },
+			() => random.below(3) * random.next()
+		);
+		const counts = Float64Array.from({ length: bins.count }, (_, k) =>
+			occupancyS[k] > 0 ? random.below(6) : 0
+		);
+		const rates = new Float64Array(bins.count);
+		rateMapper(occupancyS, smooth, 0.1)(counts, rates);
+		const quick = smoothedInformation(occupancyS, smooth, 0.1);
+		expect(quick(counts.slice())).toBeCloseTo(information(rates, occupancyS).bitsPerSpike, 12);
+		expect(quick(new Float64Array(bins.count))).toBeNaN();
+	});
+});
