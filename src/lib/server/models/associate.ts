@@ -134,6 +134,7 @@ export function associate(sequelize: Sequelize): void {
 	Sorting.hasMany(SortingSession, { as: 'covers', foreignKey: 'sortingId' });
 	SortingSession.belongsTo(Sorting, { as: 'sorting', foreignKey: 'sortingId' });
 	Implant.belongsTo(DriveDesign, { as: 'driveDesign', foreignKey: 'driveDesignId' });
+	Implant.belongsTo(Drive, { as: 'drive', foreignKey: 'driveId' });
 	Implant.belongsTo(Person, { as: 'surgeon', foreignKey: 'surgeonId' });
 	Drive.belongsTo(DriveDesign, { as: 'design', foreignKey: 'designId' });
 	Sorting.belongsTo(Person, { as: 'person', foreignKey: 'personId' });

@@ -9,6 +9,7 @@ import {
 } from 'sequelize';
 import { v7 as uuidv7 } from 'uuid';
 import type { Animal } from './animal';
+import type { Drive } from './drive';
 import type { DriveDesign } from './drive-design';
 import type { Person } from './person';
 import type { Site } from './site';
@@ -37,6 +38,7 @@ export class Implant extends Model<InferAttributes<Implant>, InferCreationAttrib
 	declare animal?: NonAttribute<Animal>;
 	declare surgeon?: NonAttribute<Person>;
 	declare driveDesign?: NonAttribute<DriveDesign>;
+	declare drive?: NonAttribute<Drive | null>;
 	declare sites?: NonAttribute<Site[]>;
 
 	static define(sequelize: Sequelize): void {

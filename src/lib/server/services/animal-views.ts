@@ -18,6 +18,7 @@ export interface AnimalRow {
 	isSimulated: boolean;
 	protocol: string | null;
 	floorShare: number | null;
+	baselineWeightG: number | null;
 	projects: string[];
 	/** The latest weight without the implant. */
 	weight: { weightG: number; share: number | null; at: string } | null;
@@ -48,7 +49,6 @@ export interface AnimalView extends Omit<AnimalRow, 'implants'> {
 	id: string;
 	source: string;
 	note: string;
-	baselineWeightG: number | null;
 	revision: number;
 	protocols: Membership[];
 	projectMemberships: Membership[];
@@ -111,6 +111,7 @@ export function toRow(animal: Animal, today: string): AnimalRow {
 		isSimulated: animal.isSimulated,
 		protocol: protocol?.number ?? null,
 		floorShare: protocol ? protocol.weightFloorPercent / 100 : null,
+		baselineWeightG: animal.baselineWeightG,
 		projects: (animal.projects ?? []).filter(isNow).map(({ project }) => project?.name ?? ''),
 		weight: weight
 			? {
@@ -133,10 +134,10 @@ export function toRow(animal: Animal, today: string): AnimalRow {
 }
 
 export function toView(animal: Animal, today: string): AnimalView {
-	const { id, source, note, baselineWeightG, revision } = animal;
+	const { id, source, note, revision } = animal;
 	return {
 		...toRow(animal, today),
-		...{ id, source, note, baselineWeightG, revision },
+		...{ id, source, note, revision },
 		protocols: (animal.protocols ?? []).map((row) => ({
 			id: row.id,
 			name: row.protocol?.number ?? '',
