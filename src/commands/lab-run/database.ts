@@ -51,31 +51,33 @@ export async function bringUpToDate(home: Home, database: LabDatabase): Promise<
 	await migrate(database.ownerUrl);
 }
 
+const FILLING = 'filling';
+
 /**
- * Runs `fill` on an empty database. A fill that was cut off is begun again from nothing:
- * until it is whole no page is served, so the half-filled database holds nobody's work.
- * @returns whether there was anything to fill
+ * Empties a database whose filling with the demo lab was cut off. Until that was whole no page
+ * was served, so it holds nobody's work.
  */
+export async function discardHalfFilled(home: Home, database: LabDatabase): Promise<void> {
+	const mark = home.file(FILLING);
+	if (!existsSync(mark)) return;
+	if (!database.empty) {
+		throw new Refusal(
+			`Filling the demo lab was cut off earlier, and ${mark} says so. The database is not ours to empty: hand over an empty one, remove that file, and start again.`
+		);
+	}
+	say('Filling the demo lab was cut off earlier; the database is made anew.');
+	await database.empty();
+	rmSync(mark);
+}
+
+/** Runs `fill` when the database is empty. */
 export async function fillOnce(
 	home: Home,
 	database: LabDatabase,
 	fill: () => Promise<void>
-): Promise<boolean> {
-	const mark = home.file('filling');
-	if (existsSync(mark)) {
-		if (!database.empty) {
-			throw new Refusal(
-				`Filling the demo lab was cut off earlier, and ${mark} says so. The database is not ours to empty: hand over an empty one, remove that file, and start again.`
-			);
-		}
-		say('Filling the demo lab was cut off earlier; beginning again.');
-		await database.empty();
-		await migrate(database.ownerUrl);
-	} else if (!(await isEmpty(database.ownerUrl))) {
-		return false;
-	}
-	writeFileSync(mark, '');
+): Promise<void> {
+	if (!(await isEmpty(database.ownerUrl))) return;
+	writeFileSync(home.file(FILLING), '');
 	await fill();
-	rmSync(mark);
-	return true;
+	rmSync(home.file(FILLING));
 }

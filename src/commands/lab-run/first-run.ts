@@ -1,51 +1,36 @@
-import { existsSync } from 'node:fs';
-import { join } from 'node:path';
-import { pathToFileURL } from 'node:url';
+import { signIns, type DemoSignIn } from '../../demo/sign-ins';
 import { withClient } from '../cluster/roles';
-import { CHECKOUT } from '../home/home';
 import { say } from '../machine/say';
 import { closeConnections, openConnections } from './connections';
-import type { DemoSignIn } from './greeting';
 
-/** A part of the application that this process runs itself, with the settings its children get. */
-async function load<T>(path: string, env: NodeJS.ProcessEnv): Promise<T | undefined> {
-	const file = join(CHECKOUT, path);
-	if (!existsSync(file)) return undefined;
+/** Runs a part of the application in this process, with the settings that its children get. */
+async function inApplication<T>(env: NodeJS.ProcessEnv, work: () => Promise<T>): Promise<T> {
 	Object.assign(process.env, env);
-	return (await import(pathToFileURL(file).href)) as T;
-}
-
-export async function fillDemo(env: NodeJS.ProcessEnv): Promise<void> {
-	const demo = await load<{ default: () => Promise<void> }>('src/demo/fill.ts', env);
-	if (!demo) return say('There is no demo lab in this version; the lab stays empty.');
-	say('Filling the demo lab with simulated data …');
+	await openConnections();
 	try {
-		await openConnections();
-		await demo.default();
+		return await work();
 	} finally {
 		await closeConnections();
 	}
+}
+
+export async function fillDemo(env: NodeJS.ProcessEnv): Promise<void> {
+	say('Filling the demo lab with simulated data …');
+	const { default: fill } = await import('../../demo/fill');
+	await inApplication(env, () => fill());
 }
 
 /** The sign-ins of the demo lab, when that is what the database holds. */
 export async function demoSignIns(ownerUrl: string): Promise<DemoSignIn[]> {
-	const demo = await load<{ signIns: DemoSignIn[] }>('src/demo/sign-ins.ts', {});
-	if (!demo) return [];
-	const emails = await withClient(ownerUrl, (client) =>
-		client.query<{ email: string }>('SELECT email FROM person')
+	const people = await withClient(ownerUrl, (client) =>
+		client.query<{ email: string }>('SELECT email FROM person WHERE deactivated_at IS NULL')
 	);
-	const known = new Set(emails.rows.map(({ email }) => email.toLowerCase()));
-	return demo.signIns.filter(({ email }) => known.has(email.toLowerCase()));
+	const known = new Set(people.rows.map(({ email }) => email));
+	return signIns.filter(({ email }) => known.has(email));
 }
 
 /** The address at which the first PI of an empty lab is made; undefined once there are people. */
 export async function firstAddress(env: NodeJS.ProcessEnv): Promise<string | undefined> {
-	Object.assign(process.env, env);
 	const people = await import('$lib/server/services/people');
-	try {
-		await openConnections();
-		return (await people.firstAddress()) ?? undefined;
-	} finally {
-		await closeConnections();
-	}
+	return inApplication(env, async () => (await people.firstAddress()) ?? undefined);
 }

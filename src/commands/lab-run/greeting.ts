@@ -1,11 +1,6 @@
 import { relative } from 'node:path';
+import type { DemoSignIn } from '../../demo/sign-ins';
 import type { Home } from '../home/home';
-
-export interface DemoSignIn {
-	email: string;
-	password: string;
-	roles: string[];
-}
 
 /** The few lines a person needs once everything runs. */
 export function greeting(

@@ -4,7 +4,7 @@ import { removeHome } from '../cluster/throw-away';
 import { CHECKOUT, openHome, type Home } from '../home/home';
 import { say } from '../machine/say';
 import { childEnv, type WebPlace } from './child-env';
-import { bringUpToDate, fillOnce, openDatabase } from './database';
+import { bringUpToDate, discardHalfFilled, fillOnce, openDatabase } from './database';
 import { demoSignIns, fillDemo, firstAddress } from './first-run';
 import { greeting } from './greeting';
 import { waitForHealth } from './health';
@@ -88,6 +88,7 @@ async function startAll({ mode, home, isThrowAway, signals, running, tell }: Run
 
 	const database = await step(openDatabase(home, isThrowAway));
 	running.push(database);
+	await step(discardHalfFilled(home, database));
 	await step(bringUpToDate(home, database));
 
 	const port = await step(webPort(process.env));
@@ -133,7 +134,7 @@ async function startAll({ mode, home, isThrowAway, signals, running, tell }: Run
 	console.log(
 		greeting(address, home, {
 			signIns: await demoSignIns(database.ownerUrl),
-			firstAddress: isDemo ? undefined : await firstAddress(env)
+			firstAddress: await firstAddress(env)
 		})
 	);
 	const unwatch = mode.watch?.(worker);
