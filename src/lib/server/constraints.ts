@@ -8,6 +8,10 @@ export const CONSTRAINT_WORDS: Record<string, [code: string, message: string]> =
 		'already-invited',
 		'This address has an open invitation. Withdraw it first.'
 	],
+	lab_setting_key_version_key: [
+		'stale',
+		'Somebody changed this setting at the same moment. Nothing was overwritten: open the page again and enter your change once more.'
+	],
 	project_name_key: ['name-taken', 'A project of this name exists.'],
 	protocol_number_key: ['name-taken', 'A protocol of this number exists.'],
 	arena_name_key: ['name-taken', 'An arena of this name exists.'],

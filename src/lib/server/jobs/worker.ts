@@ -1,6 +1,8 @@
 import PgBoss from 'pg-boss';
 import { closeDb } from '$lib/server/db';
+import { closeTransport } from '$lib/server/mail/transport';
 import { handOutOrphans } from '$lib/server/services/analysis-runs';
+import { wakeForgotten } from '$lib/server/services/outbox';
 import { settings } from '$lib/server/settings';
 import { closeQueue } from './enqueue';
 import { handlers, type JobContext } from './handlers';
@@ -48,6 +50,8 @@ export async function startWorker(): Promise<Worker> {
 		throw fault;
 	}
 
+	wakeForgotten().catch(complain('mail'));
+
 	let looking: Promise<unknown> | null = null;
 	const look = setInterval(() => {
 		looking ??= handOutOrphans(lock.number, running)
@@ -63,6 +67,7 @@ export async function startWorker(): Promise<Worker> {
 			await boss.stop({ graceful: true, wait: true, timeout: GRACE_MS + 5000 });
 			clearTimeout(cut);
 			await closeThreads();
+			await closeTransport();
 			await lock.release();
 			await closeQueue();
 			await closeDb();

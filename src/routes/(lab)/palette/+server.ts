@@ -1,5 +1,5 @@
 import { json } from '@sveltejs/kit';
-import { may } from '$lib/server/access';
+import { demand, may } from '$lib/server/access';
 import { page } from '$lib/server/http/answer';
 import * as animals from '$lib/server/services/animals';
 import type { RequestHandler } from './$types';
@@ -9,6 +9,7 @@ import type { FoundAnimal } from './found-animal';
 export const GET: RequestHandler = (event) =>
 	page(event, async () => {
 		const { actor } = event.locals;
+		demand(actor, 'own.read');
 		const rows = may(actor, 'animals.read') ? await animals.list(actor) : [];
 		const found: FoundAnimal[] = rows.map(({ code, species, strain, sex }) => ({
 			code,
