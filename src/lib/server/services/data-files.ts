@@ -112,6 +112,23 @@ export async function receive(
 	return get(by, id);
 }
 
+/** Looks at a file again as one of another kind, when the header was taken for the wrong one. */
+export async function lookAgain(by: Actor | null, id: string, kind: DataKind): Promise<void> {
+	demand(by, 'sessions.write');
+	const file = await get(by, id);
+	const { refusal, ...beginning } = await look(file, file.name, kind);
+	await record(by, async (w) => {
+		const [changed] = await DataFile.update(
+			{ ...beginning, state: refusal ? 'refused' : 'received', refusal },
+			{ where: { id, state: ['received', 'refused'], withdrawnAt: null }, transaction: w.t }
+		);
+		if (changed === 0) {
+			throw new Conflict('taken-in', 'This file is taken in or withdrawn, and stays what it is.');
+		}
+		await w.log('data-file.look-again', subject(id), { kind });
+	});
+}
+
 async function refuseClosed(sessionId: string): Promise<void> {
 	const session = await Session.findByPk(sessionId);
 	if (!session) throw new NotFound();

@@ -4,7 +4,7 @@ import type { DataReading, DataRefusal } from '$lib/schemas/data-state';
 import { sortingDetailSchema } from '$lib/schemas/sorting';
 import { demand, type Actor } from '$lib/server/access';
 import { db } from '$lib/server/db';
-import { Conflict, Invalid, NotFound } from '$lib/server/errors';
+import { Conflict, Invalid, NotFound, RefusedFile } from '$lib/server/errors';
 import type { ReadTableInput, ReadTableOutput, Span } from '$lib/server/jobs/tasks/read-table-task';
 import { inThread } from '$lib/server/jobs/threads';
 import { Arena } from '$lib/server/models/arena';
@@ -52,7 +52,7 @@ export async function takeIn(
 
 /**
  * Receives and takes in at once, for programs.
- * @throws Invalid with the reason, row and column when the file cannot be used; it stays as refused
+ * @throws RefusedFile with the reason, row and column when the file cannot be used; it stays as refused
  */
 export async function put(
 	by: Actor | null,
@@ -61,17 +61,8 @@ export async function put(
 ): Promise<dataFiles.DataFileView> {
 	const { id, refusal } = await dataFiles.receive(by, sent);
 	const file = refusal ? await dataFiles.get(by, id) : await takeIn(by, id, input);
-	if (!file.refusal) return file;
-	const { code, column, message } = file.refusal;
-	throw new Invalid([{ field: column ?? '', message: placed(file.refusal) }], message, code);
-}
-
-/** "Row 7, column x_cm: …" */
-export function placed({ row, column, message }: DataRefusal): string {
-	const place = [row === null ? '' : `row ${row}`, column === null ? '' : `column ${column}`]
-		.filter(Boolean)
-		.join(', ');
-	return place ? `${place.charAt(0).toUpperCase()}${place.slice(1)}: ${message}` : message;
+	if (file.refusal) throw new RefusedFile(file.refusal);
+	return file;
 }
 
 /** Said before the work of reading; the database says it again at the end, for two at once. */

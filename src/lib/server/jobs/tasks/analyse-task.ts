@@ -6,7 +6,7 @@ import { TableError } from '$lib/analysis/tables/table-error';
 import type { AnalysisSetup } from '$lib/schemas/data-state';
 import { putParts } from '$lib/server/storage/result-parts';
 import { readTrack } from '$lib/server/storage/position-track';
-import { decodingPart, pathPart, spikesPart } from './result-arrays';
+import { decodingPart, mapsPart, pathPart, spikesPart } from './result-arrays';
 
 export interface AnalyseInput {
 	track: { sha256: string; samples: number };
@@ -42,6 +42,7 @@ export async function analyseTask(
 		);
 		const decoding = arrays.decoding && decodingPart(arrays.decoding);
 		const arraysSha256 = await putParts({
+			maps: mapsPart(arrays),
 			path: pathPart(arrays),
 			spikes: spikesPart(arrays),
 			...(decoding && { decoding })

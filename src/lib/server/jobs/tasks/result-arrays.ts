@@ -13,6 +13,14 @@ export function pathPart({ tS, xCm, yCm, isUsed }: SessionArrays): Uint8Array {
 	});
 }
 
+/** Rate maps of all units, [unit][bin], and the time spent in each bin. */
+export function mapsPart({ ratesHz, occupancyS }: SessionArrays): Uint8Array {
+	return packArrays({
+		ratesHz: Float32Array.from(ratesHz),
+		occupancyS: Float32Array.from(occupancyS)
+	});
+}
+
 /** Position samples of the spikes that count, unit after unit; `first[u]` is where unit u begins. */
 export function spikesPart({ spikeSamples, isUsed }: SessionArrays): Uint8Array {
 	const kept = spikeSamples.map((samples) =>
