@@ -5,7 +5,7 @@ import { Bundle } from '$lib/server/models/bundle';
 import { Carriage } from '$lib/server/models/carriage';
 import { Implant } from '$lib/server/models/implant';
 import { Site } from '$lib/server/models/site';
-import { Turn } from '$lib/server/models/turn';
+import { type Turn } from '$lib/server/models/turn';
 
 /** A carriage with what its implant keeps about the screw, and the bundles it moves. */
 export interface CarriageFacts {
