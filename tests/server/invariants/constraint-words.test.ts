@@ -12,7 +12,7 @@ const OUT_OF_REACH = [
 	'log_hash_key',
 	'outbox_dedupe_key_key',
 	'password_reset_token_hash_key',
-	'unit_sorting_id_label_key'
+	'unit_label_key'
 ];
 
 /** Unique, exclusion and named check constraints, and the names that triggers raise. */
