@@ -12,7 +12,7 @@ import {
 } from '../lib/analysis/tables/read-session-tables';
 import { TableError } from '../lib/analysis/tables/table-error';
 import { ANALYSIS_VERSION } from '../lib/analysis/version';
-import { readHashed, reasonOf } from './analyse/hashed-file';
+import { fromWhereTyped, readHashed, reasonOf } from './analyse/hashed-file';
 import { optionOf, readOptions, type AnalyseOptions } from './analyse/options';
 import { readable } from './analyse/readable';
 import { Unusable } from './analyse/unusable';
@@ -61,10 +61,11 @@ function lineOf(error: unknown, options: AnalyseOptions | null): string | null {
 
 /** Writes beside the place and moves it there, so that nobody ever sees half a file. */
 async function writeWhole(path: string, text: string): Promise<void> {
-	const part = `${path}.${process.pid}.part`;
+	const target = fromWhereTyped(path);
+	const part = `${target}.${process.pid}.part`;
 	try {
 		await writeFile(part, text);
-		await rename(part, path);
+		await rename(part, target);
 	} catch (error) {
 		await rm(part, { force: true });
 		throw new Unusable(`${path}: cannot be written, ${reasonOf(error)}`);

@@ -1,5 +1,7 @@
 import { createHash } from 'node:crypto';
 import { createReadStream } from 'node:fs';
+import { resolve } from 'node:path';
+import process from 'node:process';
 import { Unusable } from './unusable';
 
 /** Bytes read at a time. */
@@ -16,7 +18,7 @@ export async function readHashed<T>(
 	const hash = createHash('sha256');
 	async function* pieces(): AsyncGenerator<Uint8Array> {
 		try {
-			for await (const piece of createReadStream(path, { highWaterMark: PIECE })) {
+			for await (const piece of createReadStream(fromWhereTyped(path), { highWaterMark: PIECE })) {
 				hash.update(piece);
 				yield piece;
 			}
@@ -26,6 +28,12 @@ export async function readHashed<T>(
 	}
 	const value = await read(pieces());
 	return { value, sha256: hash.digest('hex') };
+}
+
+/** npm moves a script to the folder of the package; a path is meant from where it was typed. */
+export function fromWhereTyped(path: string): string {
+	const isScript = process.env.npm_lifecycle_event === 'analyse';
+	return resolve((isScript && process.env.INIT_CWD) || process.cwd(), path);
 }
 
 /** Why a file cannot be read or written, in words. */

@@ -43,7 +43,7 @@ export function checkPath(position: SessionInput['position'], warnings: string[]
 		throw new TableError(
 			'position',
 			'unit-of-time',
-			`samples are ${stepS} s apart, so the times are probably in milliseconds or microseconds; give them in seconds`
+			`samples are ${Number(stepS.toPrecision(3))} s apart, so the times are probably in milliseconds or microseconds; give them in seconds`
 		);
 	}
 	const durationS = tS[tS.length - 1] - tS[0];
