@@ -79,7 +79,6 @@ export const CONSTRAINT_WORDS: Record<string, [code: string, message: string]> =
 	],
 	bundle_implant_id_label_key: ['label-taken', 'The implant has a bundle of this name.'],
 	channel_bundle_id_number_key: ['number-taken', 'The bundle has a channel of this number.'],
-	epoch_run_has_arena: ['run-without-arena', 'A run epoch needs the arena it was run in.'],
 	turn_zero_only_voids: [
 		'nothing-turned',
 		'A turn of nothing is no turn. To take a turn back from the record, correct it to 0.'

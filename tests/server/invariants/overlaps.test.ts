@@ -88,7 +88,7 @@ describe('epochs of a session', () => {
 		const run = { sessionId, name: 'run 2', kind: 'run' as const, startS: 700, stopS: 800 };
 		const add = (arenaId: string | null) =>
 			written((transaction) => Epoch.create({ ...run, arenaId }, { transaction }));
-		await expect(add(null)).rejects.toMatchObject({ code: 'run-without-arena' });
+		await expect(add(null)).rejects.toMatchObject({ code: 'epoch-needs-arena' });
 		await expect(add((await makeArena()).id)).resolves.toBeUndefined();
 	});
 });

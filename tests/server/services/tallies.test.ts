@@ -103,10 +103,15 @@ describe('counting units', () => {
 		});
 	});
 
-	it('of an earlier day is marked as entered later', async () => {
+	it('of an earlier day needs its moment, and is marked as entered later', async () => {
 		const { code } = await rat();
-		const [row] = await tallies.record(by, code, '2026-03-05', [{ bundle: 'T01', principal: 4 }]);
-		expect(row.isEnteredLater).toBe(true);
+		const row = { bundle: 'T01', principal: 4 };
+		await expect(tallies.record(by, code, '2026-03-05', [row])).rejects.toMatchObject({
+			issues: [{ field: '[0].takenAt' }]
+		});
+		const timed = { ...row, takenAt: '2026-03-05T11:00:00Z' };
+		const [entered] = await tallies.record(by, code, '2026-03-05', [timed]);
+		expect(entered.isEnteredLater).toBe(true);
 	});
 
 	it('adds nothing to a signed day', async () => {

@@ -58,12 +58,15 @@ export async function record(
 		const changed: string[] = [];
 		for (const [i, row] of rows.entries()) {
 			const bundle = bundleNamed(animal, bundles, row.bundle, i);
+			// First, so that a day's rows can be sent again as they were read.
+			if (!(await clearWay(by, w, day, bundle, row))) continue;
 			const takenAt = row.takenAt ?? now();
-			if (row.takenAt && dayOf(takenAt) !== date) {
-				const message = `This moment is not on the lab day ${date}.`;
+			if (dayOf(takenAt) !== date) {
+				const message = row.takenAt
+					? `This moment is not on the lab day ${date}.`
+					: `Say when it was counted: the lab day ${date} is over.`;
 				throw new Invalid([{ field: `[${i}].takenAt`, message }]);
 			}
-			if (!(await clearWay(by, w, day, bundle, row))) continue;
 			const isEnteredLater = date < today;
 			await Tally.create(
 				{
