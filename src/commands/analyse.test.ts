@@ -6,6 +6,9 @@ import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { recordingFile } from '../../tests/factories/recording';
 import analyse from './analyse';
 
+// Whole sessions are analysed here; a busy machine needs its time.
+vi.setConfig({ testTimeout: 30_000 });
+
 const track = (file: string) => recordingFile('ca1-linear-track', file);
 const inputs = [
 	...['--position', track('linear.csv'), '--spikes', track('spikes.csv')],

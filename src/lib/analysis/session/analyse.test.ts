@@ -1,10 +1,13 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { seeded } from '../random/seeded';
 import { analyseSession } from './analyse';
 import { completeResult } from './complete-result';
 import type { SessionInput } from './input';
 import { ParameterError, sessionParameters, type GivenParameters } from './parameters';
 import { withBundles } from './with-bundles';
+
+// Whole sessions are analysed here; a busy machine needs its time.
+vi.setConfig({ testTimeout: 30_000 });
 
 /** A simulated animal running to and fro on 200 cm, with cells of known fields. */
 function simulated({ seconds = 400, cells = 12, fromS = 0, seed = 1 } = {}): SessionInput {

@@ -1,7 +1,11 @@
-import { describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it, vi } from 'vitest';
 import { recording, recordingReference } from '../../../../tests/factories/recording';
 import { analyseSession } from './analyse';
+import type { SessionInput } from './input';
 import { sessionParameters, type GivenParameters } from './parameters';
+
+// A whole recording is analysed in each test; a busy machine needs its time.
+vi.setConfig({ testTimeout: 60_000 });
 
 // Figures of two open recordings made from written definitions by a separate program in Python
 // (numpy), and again by a third in another language. They are rounded to four decimals, hence 5e-5.
@@ -34,14 +38,15 @@ const difference = (got: number | null, want: number | null) =>
 
 describe.each(CASES)('$name with $reference', ({ name, file, reference, given }) => {
 	const want = recordingReference(name, reference);
-	const run = async (more: Partial<GivenParameters> = {}) =>
-		analyseSession(
-			await recording(name, file),
-			sessionParameters({ ...given, shuffles: 0, ...more })
-		);
+	let input: SessionInput;
+	beforeAll(async () => {
+		input = await recording(name, file);
+	});
+	const run = (more: Partial<GivenParameters> = {}) =>
+		analyseSession(input, sessionParameters({ ...given, shuffles: 0, ...more }));
 
-	it('has the same dwell and the same maps', async () => {
-		const { result } = await run();
+	it('has the same dwell and the same maps', () => {
+		const { result } = run();
 		const seconds = result.occupancy.secondsByBin.map((s) => s ?? 0);
 		expect(seconds.reduce((a, b) => a + b, 0)).toBeCloseTo(want.used_dwell_s, 3);
 		expect(seconds.filter((s) => s >= 0.1)).toHaveLength(want.valid_bins);
@@ -60,14 +65,14 @@ describe.each(CASES)('$name with $reference', ({ name, file, reference, given })
 		}
 	});
 
-	it.each(want.decoding)('decodes alike in windows of $tau_s s', async (told) => {
+	it.each(want.decoding)('decodes alike in windows of $tau_s s', (told) => {
 		const windowMs = told.tau_s * 1000;
-		const even = (await run({ windowMs })).result.decoding;
+		const even = run({ windowMs }).result.decoding;
 		expect([even.windows, even.unitsUsed]).toEqual([told.windows, told.units]);
 		expect(difference(even.medianErrorCm, told.median_error_cm)).toBeLessThan(CM);
 		expect(difference(even.meanErrorCm, told.mean_error_cm)).toBeLessThan(CM);
 		expect(difference(even.chanceMedianErrorCm, told.chance_median_error_cm)).toBeLessThan(CM);
-		const spent = (await run({ windowMs, prior: 'time-spent' })).result.decoding;
+		const spent = run({ windowMs, prior: 'time-spent' }).result.decoding;
 		expect(difference(spent.medianErrorCm, told.median_error_cm_dwell_prior)).toBeLessThan(CM);
 	});
 });
