@@ -59,7 +59,7 @@ export default defineConfig({
 		command: 'exec node src/commands/run.mjs start',
 		cwd: checkout,
 		url: `${baseURL}/api/health`,
-		timeout: 240_000,
+		timeout: 600_000,
 		stdout: 'pipe',
 		gracefulShutdown: { signal: 'SIGTERM', timeout: 30_000 },
 		env: { QUARTERTURN_HOME: home, PORT: port, QUARTERTURN_THROW_AWAY: '1', DEMO: '1' }
