@@ -11,15 +11,10 @@ export const personNameSchema = z
 	.min(1, 'Give a name.')
 	.max(120, 'Keep the name within 120 characters.');
 
-const rolesSchema = z
-	.array(roleSchema)
-	.min(1, 'Choose at least one role.')
-	.transform((roles) => [...new Set(roles)]);
-
 export const inviteSchema = z.object({
 	email: mailAddressSchema,
 	name: personNameSchema,
-	roles: rolesSchema
+	roles: z.array(roleSchema).min(1, 'Choose at least one role.')
 });
 export type Invite = z.infer<typeof inviteSchema>;
 

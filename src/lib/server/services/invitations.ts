@@ -50,7 +50,8 @@ export async function list(by: Actor | null): Promise<OpenInvitation[]> {
 
 export async function invite(by: Actor | null, input: Invite): Promise<string> {
 	demand(by, 'members.write');
-	const { email, name, roles } = parsed(inviteSchema, input);
+	const { email, name, ...given } = parsed(inviteSchema, input);
+	const roles = [...new Set(given.roles)];
 	refuseRoleChange(by, null, roles);
 	return record(by, async (w) => {
 		if (await Person.findOne({ where: { email }, transaction: w.t })) {
