@@ -1,3 +1,6 @@
+import { refusalPlace } from '$lib/format/refusal-place';
+import type { DataRefusal } from '$lib/schemas/data-state';
+
 /** What a service may refuse, told apart by class. Everything else that is thrown is a bug. */
 export abstract class Refusal extends Error {
 	abstract readonly status: number;
@@ -64,6 +67,15 @@ export class Invalid extends Refusal {
 		code = 'invalid'
 	) {
 		super(code, message);
+	}
+}
+
+/** A file that cannot be used, and where in it the reason lies. */
+export class RefusedFile extends Invalid {
+	constructor(readonly refusal: DataRefusal) {
+		const { code, column, row, message } = refusal;
+		const said = refusalPlace({ column, row }) + message;
+		super([{ field: column ?? '', message: said }], said, code);
 	}
 }
 

@@ -112,7 +112,7 @@ describe('input', () => {
 		const body = { depthUm: 'deep', sites: [{ label: 7 }] };
 		const { status, code, issues } = await refused({ token, body });
 		expect({ status, code }).toEqual({ status: 422, code: 'invalid' });
-		expect(issues?.map(({ field }) => field)).toEqual(['depthUm', 'sites.0.label']);
+		expect(issues?.map(({ field }) => field)).toEqual(['depthUm', 'sites[0].label']);
 	});
 
 	it.each([

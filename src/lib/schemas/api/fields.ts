@@ -1,19 +1,19 @@
 import { z } from 'zod';
 
-/** A moment given by a script: ISO 8601 with its zone, because a lab's clock is not the server's. */
-export const momentSchema = z.iso
-	.datetime({
-		offset: true,
-		error: 'Give date, time and zone, like 2026-04-09T10:30:00+02:00.'
-	})
-	.transform((text) => new Date(text))
-	.meta({ override: { type: 'string', format: 'date-time' } });
+/** A moment given by a script, with its offset: a lab's clock is not the server's. */
+export const momentSchema = z.iso.datetime({
+	offset: true,
+	error: 'Give date, time and offset, like 2026-04-09T10:30:00+02:00.'
+});
 
 /** A moment in an answer, always UTC. */
-export const momentAnswerSchema = z
+export const momentAnswerSchema = z.iso.datetime();
+
+/** The same for services that give dates. */
+export const dateAnswerSchema = z
 	.date()
 	.transform((at) => at.toISOString())
-	.pipe(z.iso.datetime());
+	.pipe(momentAnswerSchema);
 
 export const animalCodeSchema = z
 	.string()

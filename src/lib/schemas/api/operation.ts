@@ -21,6 +21,8 @@ export interface Operation {
 	headers?: z.ZodObject;
 	/** JSON of the body. */
 	body?: z.ZodType;
+	/** An empty body stands for `{}`. */
+	isBodyOptional?: boolean;
 	/** Media types of a body that is a file instead. */
 	file?: Readonly<Record<string, string>>;
 	status: 200 | 201 | 202;

@@ -5,7 +5,7 @@ import { demand, type Actor } from '$lib/server/access';
 import * as idempotencyKeys from '$lib/server/services/idempotency-keys';
 import type { ApiEvent } from './api-event';
 import { bearer } from './bearer';
-import { parseBody, parseHeaders, parseParams, parseQuery, readJsonText } from './parse';
+import { parseBody, parseNamed, parseParams, readJsonText } from './parse';
 import { problem, withProblems } from './problem';
 import { BadRequest, MethodNotAllowed } from './protocol-refusals';
 
@@ -61,10 +61,11 @@ export function endpoint<O extends Operation>(
 async function read<O extends Operation>(operation: O, { request, url, params }: ApiEvent) {
 	const parsed = {
 		params: operation.params && parseParams(operation.params, params),
-		query: operation.query && parseQuery(operation.query, url.searchParams),
-		headers: operation.headers && parseHeaders(operation.headers, request.headers)
+		query: operation.query && parseNamed(operation.query, url.searchParams),
+		headers: operation.headers && parseNamed(operation.headers, request.headers)
 	};
-	const text = operation.body ? await readJsonText(request) : '';
+	const isLeftOut = operation.isBodyOptional && request.body === null;
+	const text = isLeftOut ? '{}' : operation.body ? await readJsonText(request) : '';
 	const body = operation.body && parseBody(operation.body, text);
 	return { ...parsed, body, text } as Omit<Call<O>, 'by' | 'request'> & { text: string };
 }

@@ -44,7 +44,10 @@ function describe(operation: Operation): ZodOpenApiOperationObject {
 			...(header && { header })
 		},
 		...(body && {
-			requestBody: { required: true, content: { 'application/json': { schema: body } } }
+			requestBody: {
+				required: !operation.isBodyOptional,
+				content: { 'application/json': { schema: body } }
+			}
 		}),
 		...(file && { requestBody: { required: true, content: fileContent(file) } }),
 		responses: {

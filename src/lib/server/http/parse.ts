@@ -1,36 +1,33 @@
 import type { z } from 'zod';
-import { Invalid, NotFound, TooLarge, type Issue } from '$lib/server/errors';
+import { Invalid, NotFound, TooLarge } from '$lib/server/errors';
+import { parsed } from '$lib/server/parsed';
 import { BadRequest, UnsupportedType } from './protocol-refusals';
 
 /** A day's tallies or the widest implant take a tenth of this. */
 const JSON_LIMIT_BYTES = 1024 * 1024;
 
-function issuesOf(error: z.ZodError): Issue[] {
-	return error.issues.map(({ path, message }) => ({ field: path.join('.'), message }));
-}
-
 /** A parameter of the wrong shape names nothing that could exist. @throws NotFound */
 export function parseParams<S extends z.ZodType>(schema: S, params: unknown): z.output<S> {
 	const read = schema.safeParse(params);
-	if (!read.success) throw new NotFound();
-	return read.data;
+	if (read.success) return read.data;
+	// A word that is not of a closed list is explained; anything else just names nothing.
+	const [issue] = read.error.issues;
+	throw new NotFound(issue.code === 'invalid_value' ? issue.message : undefined);
 }
 
-/** @throws BadRequest naming each field; also for names the call does not know */
-export function parseQuery<S extends z.ZodObject>(schema: S, query: URLSearchParams): z.output<S> {
-	const read = schema.safeParse(Object.fromEntries(query));
-	if (!read.success) throw new BadRequest(issuesOf(read.error));
-	return read.data;
+/** Query or headers by their schema. @throws BadRequest naming each */
+export function parseNamed<S extends z.ZodObject>(
+	schema: S,
+	named: Iterable<[string, string]>
+): z.output<S> {
+	try {
+		return parsed(schema, Object.fromEntries(named));
+	} catch (fault) {
+		throw fault instanceof Invalid ? new BadRequest(fault.issues) : fault;
+	}
 }
 
-/** @throws BadRequest naming each header */
-export function parseHeaders<S extends z.ZodObject>(schema: S, headers: Headers): z.output<S> {
-	const read = schema.safeParse(Object.fromEntries(headers));
-	if (!read.success) throw new BadRequest(issuesOf(read.error));
-	return read.data;
-}
-
-/** @throws Invalid naming each field */
+/** @throws BadRequest when it is no JSON, Invalid naming each field */
 export function parseBody<S extends z.ZodType>(schema: S, text: string): z.output<S> {
 	let sent: unknown;
 	try {
@@ -39,9 +36,7 @@ export function parseBody<S extends z.ZodType>(schema: S, text: string): z.outpu
 		const reason = cause instanceof Error ? cause.message : 'unreadable';
 		throw new BadRequest([{ field: '', message: `The body is not JSON: ${reason}.` }]);
 	}
-	const read = schema.safeParse(sent);
-	if (!read.success) throw new Invalid(issuesOf(read.error));
-	return read.data;
+	return parsed(schema, sent);
 }
 
 /** @throws UnsupportedType, TooLarge, BadRequest */

@@ -1,7 +1,7 @@
 import { STATUS_CODES } from 'node:http';
 import { ConnectionError } from 'sequelize';
 import type { ProblemDocument } from '$lib/schemas/api/problem';
-import { Invalid, Refusal, TooMany, Unauthenticated } from '$lib/server/errors';
+import { Invalid, RefusedFile, Refusal, TooMany, Unauthenticated } from '$lib/server/errors';
 import { logFault } from '$lib/server/fault-log';
 import { MethodNotAllowed } from './protocol-refusals';
 
@@ -32,10 +32,15 @@ export function problem(refusal: Refusal): Response {
 			status: refusal.status,
 			code: refusal.code,
 			detail: refusal.message,
-			...(refusal instanceof Invalid && { issues: refusal.issues })
+			...(refusal instanceof Invalid && { issues: refusal.issues }),
+			...(refusal instanceof RefusedFile && { file: placeOf(refusal) })
 		},
 		headersOf(refusal)
 	);
+}
+
+function placeOf({ refusal: { row, column } }: RefusedFile) {
+	return { row, column };
 }
 
 function headersOf(refusal: Refusal): Record<string, string> {

@@ -21,3 +21,20 @@ export class UnsupportedType extends Refusal {
 		super('unsupported-media-type', message);
 	}
 }
+
+export class PreconditionFailed extends Refusal {
+	readonly status = 412;
+	constructor(what: string) {
+		super(
+			'precondition-failed',
+			`The ${what} was changed since you read it. Nothing was recorded: read it again, then send your change with the new ETag.`
+		);
+	}
+}
+
+export class CutOff extends Refusal {
+	readonly status = 400;
+	constructor() {
+		super('cut-off', 'The upload was cut off. Nothing was kept: send the file again.');
+	}
+}

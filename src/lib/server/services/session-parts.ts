@@ -13,7 +13,14 @@ function named(ref: string) {
 }
 
 async function arenaId(ref: string, field: string, transaction: Transaction): Promise<string> {
-	const arena = await Arena.findOne({ where: named(ref), attributes: ['id'], transaction });
+	const arena =
+		(await Arena.findOne({ where: named(ref), transaction })) ??
+		// A script may know the arena by its description, `straight:300`, as the command line does.
+		(await Arena.findOne({
+			where: { withdrawnAt: null, description: ref.trim() },
+			order: ['createdAt', 'id'],
+			transaction
+		}));
 	if (arena) return arena.id;
 	throw new Invalid([
 		{ field, message: `There is no arena "${ref}". A PI can add it on the Lab page.` }

@@ -81,6 +81,18 @@ export async function list(by: Actor | null, sessionId: string): Promise<Sorting
 	}));
 }
 
+/** Ids of the sessions a sorting covers, in the order they were recorded. @throws NotFound */
+export async function sessionsOf(by: Actor | null, id: string): Promise<string[]> {
+	demand(by, 'data.read');
+	const rows = await db().query<{ id: string }>(
+		`SELECT s.id FROM sorting_session c JOIN session s ON s.id = c.session_id
+		WHERE c.sorting_id = $id ORDER BY s.starts_at, s.id`,
+		{ bind: { id }, type: QueryTypes.SELECT }
+	);
+	if (rows.length === 0) throw new NotFound();
+	return rows.map((row) => row.id);
+}
+
 /** Announces a sorting of one or more sessions of a day; its spikes come with a file. */
 export async function create(
 	by: Actor | null,

@@ -59,8 +59,10 @@ export async function put(
 	sent: Parameters<typeof dataFiles.receive>[1],
 	input: unknown = {}
 ): Promise<dataFiles.DataFileView> {
-	const { id, refusal } = await dataFiles.receive(by, sent);
-	const file = refusal ? await dataFiles.get(by, id) : await takeIn(by, id, input);
+	const received = await dataFiles.receive(by, sent);
+	// Sent again, a table that was refused for how it was read is read anew.
+	const isTable = received.refusal?.code !== 'not-a-table';
+	const file = isTable ? await takeIn(by, received.id, input) : received;
 	if (file.refusal) throw new RefusedFile(file.refusal);
 	return file;
 }

@@ -26,6 +26,9 @@ export function limited(content: Readable): Readable {
 			else done(null, chunk);
 		}
 	});
+	// The reader gets the fault from its own reading; one that comes before it has begun would find
+	// nobody listening and end the process.
+	gate.on('error', () => undefined);
 	// Not pipeline: the source of a request must not be destroyed before its answer is sent.
 	content.on('error', (fault) => gate.destroy(fault));
 	content.on('close', () => {
