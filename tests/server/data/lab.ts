@@ -54,7 +54,7 @@ export async function send(
 		name,
 		content: Readable.from([bytes])
 	});
-	return received.refusal ? received : takeIn.takeIn(by, received.id, choice);
+	return takeIn.takeIn(by, received.id, choice);
 }
 
 /** Positions that run up and down a 100 cm track at 20 cm/s, 20 a second. */

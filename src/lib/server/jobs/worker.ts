@@ -1,5 +1,5 @@
 import PgBoss from 'pg-boss';
-import { closeDb } from '$lib/server/db';
+import { closeDb, db } from '$lib/server/db';
 import { closeTransport } from '$lib/server/mail/transport';
 import { handOutOrphans } from '$lib/server/services/analysis-runs';
 import { wakeForgotten } from '$lib/server/services/outbox';
@@ -27,6 +27,8 @@ export interface Worker {
  * @throws when the database cannot be reached at the start
  */
 export async function startWorker(): Promise<Worker> {
+	// Defines the models, which handlers use before anything else asks for the database.
+	db();
 	const lock = await holdWorkerLock();
 	const running = new Set<string>();
 	const abort = new AbortController();

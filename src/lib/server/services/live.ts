@@ -15,8 +15,11 @@ const noteSchema = z.object({
 });
 export type LiveNote = z.infer<typeof noteSchema>;
 
-/** `null` after a lost connection: something may have been missed, so read everything again. */
-type Listener = (note: LiveNote | null) => void;
+/**
+ * `again` after a lost connection: something may have been missed, so read everything anew.
+ * `end` when the process stops.
+ */
+type Listener = (note: LiveNote | 'again' | 'end') => void;
 
 class Ear {
 	private readonly listeners = new Map<string, Set<Listener>>();
@@ -45,6 +48,12 @@ class Ear {
 		this.client = undefined;
 	}
 
+	end(): void {
+		this.tellAll('end');
+		this.listeners.clear();
+		this.close();
+	}
+
 	private connect(): void {
 		const client = new pg.Client({
 			connectionString: settings().databaseUrl,
@@ -59,7 +68,7 @@ class Ear {
 		client
 			.connect()
 			.then(() => client.query(`LISTEN ${CHANNEL}`))
-			.then(() => this.tellAll())
+			.then(() => this.tellAll('again'))
 			.catch(() => this.again(client));
 	}
 
@@ -75,8 +84,9 @@ class Ear {
 		for (const listener of this.listeners.get(note.data.sessionId) ?? []) listener(note.data);
 	}
 
-	private tellAll(): void {
-		for (const here of this.listeners.values()) for (const listener of here) listener(null);
+	private tellAll(word: 'again' | 'end'): void {
+		for (const here of [...this.listeners.values()])
+			for (const listener of [...here]) listener(word);
 	}
 }
 
@@ -98,7 +108,8 @@ export async function listen(
 	return kept.quarterturnEar.add(sessionId, listener);
 }
 
+/** Ends every page's line, so that a stopping server need not wait for them. */
 export function closeLive(): void {
-	kept.quarterturnEar?.close();
+	kept.quarterturnEar?.end();
 	kept.quarterturnEar = undefined;
 }

@@ -41,6 +41,17 @@ export function decodeStretch(
 	return { startS: fromS, windows, shade, trueCm, decodedCm };
 }
 
+/** Start of the stretch of `spanS` that holds most windows. */
+export function busiestS(startS: ArrayLike<number>, spanS: number): number {
+	let best = 0;
+	let most = 0;
+	for (let first = 0, last = 0; first < startS.length; first++) {
+		while (last < startS.length && startS[last] < startS[first] + spanS) last++;
+		if (last - first > most) [best, most] = [first, last - first];
+	}
+	return startS[best] ?? 0;
+}
+
 /** Row of a window's posterior; long recordings keep every k-th. */
 export function rows(kept: ArrayLike<number>): (window: number) => number {
 	const every = kept.length > 1 ? kept[1] : 1;

@@ -14,8 +14,15 @@ export const GET: RequestHandler = ({ locals, params, request }) =>
 		let end = () => {};
 		let controller: ReadableStreamDefaultController<Uint8Array> | undefined;
 		const send = (text: string) => controller?.enqueue(encoder.encode(text));
-		const stop = await live.listen(locals.actor, params.session, { animal: params.code }, (note) =>
-			send(note ? `event: analysis\ndata: ${note.id}\n\n` : 'event: again\ndata:\n\n')
+		const stop = await live.listen(
+			locals.actor,
+			params.session,
+			{ animal: params.code },
+			(note) => {
+				if (note === 'end') end();
+				else if (note === 'again') send('event: again\ndata: again\n\n');
+				else send(`event: analysis\ndata: ${note.id}\n\n`);
+			}
 		);
 		const content = new ReadableStream<Uint8Array>({
 			start(opened) {
