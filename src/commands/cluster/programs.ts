@@ -10,7 +10,7 @@ const DEBIAN_FOLDER = '/usr/lib/postgresql';
 
 export interface PostgresPrograms {
 	major: number;
-	program(name: 'postgres' | 'initdb' | 'pg_dump'): string;
+	program(name: 'postgres' | 'initdb' | 'pg_dump' | 'pg_restore'): string;
 }
 
 /**
