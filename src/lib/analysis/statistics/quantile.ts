@@ -16,7 +16,13 @@ export function quantileSorted(sorted: ArrayLike<number>, q: number): number {
 
 /** Quantile (type 7) of values in any order; the input stays as it is, NaN values are left out. */
 export function quantile(values: ArrayLike<number>, q: number): number {
-	return quantileSorted(Float64Array.from(values).filter(Number.isFinite).sort(), q);
+	// By hand: `Float64Array.from(…).filter(…)` boxes every number on its way.
+	const finite = new Float64Array(values.length);
+	let count = 0;
+	for (let i = 0; i < values.length; i++) {
+		if (Number.isFinite(values[i])) finite[count++] = values[i];
+	}
+	return quantileSorted(finite.subarray(0, count).sort(), q);
 }
 
 /** Median of the finite values; NaN when there are none. */

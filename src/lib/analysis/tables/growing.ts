@@ -4,9 +4,15 @@ export class GrowingFloat64 {
 
 	reserve(length: number): void {
 		if (length <= this.values.length) return;
-		const larger = new Float64Array(Math.max(length, 2 * this.values.length));
+		const larger = new Float64Array(Math.max(length, Math.ceil(1.5 * this.values.length)));
 		larger.set(this.values);
 		this.values = larger;
+	}
+
+	/** The first `length` numbers; copied only where much room would be held for nothing. */
+	first(length: number): Float64Array {
+		const isTight = this.values.length <= 1.5 * length;
+		return isTight ? this.values.subarray(0, length) : this.values.slice(0, length);
 	}
 }
 
@@ -16,7 +22,7 @@ export class GrowingInt32 {
 
 	reserve(length: number): void {
 		if (length <= this.values.length) return;
-		const larger = new Int32Array(Math.max(length, 2 * this.values.length));
+		const larger = new Int32Array(Math.max(length, Math.ceil(1.5 * this.values.length)));
 		larger.set(this.values);
 		this.values = larger;
 	}

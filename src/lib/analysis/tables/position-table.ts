@@ -20,7 +20,7 @@ const FARTHEST_CM = 10_000;
 export function positionsOf(reader: TableReader, pxPerCm?: number): PositionTable {
 	const take = (role: string) => {
 		const column = reader.column(role);
-		const values = column?.numbers?.values.slice(0, reader.rows) ?? null;
+		const values = column?.numbers?.first(reader.rows) ?? null;
 		if (!column || !values || !column.spec.field.endsWith('_px')) return values;
 		if (pxPerCm === undefined) {
 			const reason = 'positions are in pixels; give the scale in pixels per cm';

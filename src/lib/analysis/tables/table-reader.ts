@@ -8,6 +8,8 @@ import { TableError, type TableKind } from './table-error';
 const LF = 10;
 /** Bytes gathered before header and dialect are decided. */
 const BEGINNING = 65_536;
+/** More rows than a chunk is taken to hold before it is read. */
+const SPARE_ROWS = 70_000;
 /** A table has no such lines; without a limit one without line feeds would fill the memory. */
 const LONGEST_LINE = 1_048_576;
 
@@ -15,6 +17,8 @@ export interface TableOptions {
 	readonly mapping?: Mapping;
 	/** Decides the decimal mark instead of the first rows. */
 	readonly decimal?: Dialect['decimal'];
+	/** Length of the whole table where it is known: room is then taken once instead of by growing. */
+	readonly bytes?: number;
 }
 
 /**
@@ -82,11 +86,20 @@ export class TableReader {
 		const specs = columnFields(this.table, header, this.options.mapping);
 		const plan = specs.map((spec) => spec && newColumn(spec));
 		this.columns = plan.filter((column) => column !== null);
+		if (this.options.bytes) this.makeRoom(this.options.bytes, bytes);
 		const reader = new RowReader(this.table, header, { ...dialect, decimal }, plan);
 		this.reader = reader;
 		this.rest = new Uint8Array(0);
 		this.push(bytes.subarray(bytes.indexOf(LF) + 1 || bytes.length));
 		return reader;
+	}
+
+	/** Room for as many rows as the first ones let expect; growing still serves where that is wrong. */
+	private makeRoom(wholeBytes: number, beginning: Uint8Array): void {
+		let lines = 1;
+		for (const byte of beginning) if (byte === LF) lines++;
+		const rows = Math.ceil((1.02 * wholeBytes * lines) / beginning.length) + SPARE_ROWS;
+		for (const { numbers, ids } of this.columns) (numbers ?? ids)?.reserve(rows);
 	}
 
 	private refuseEndless(line: number): never {

@@ -71,7 +71,7 @@ async function read(
 	tell: (share: number) => void
 ): Promise<ReadTableOutput> {
 	const { kind, sha256, bytes, decimal, mapping, pxPerCm } = input;
-	const options = { decimal, mapping };
+	const options = { decimal, mapping, bytes };
 	const open = async () =>
 		counted(await storage().read(sha256), (done) => tell(bytes > 0 ? done / bytes : 1));
 	switch (kind) {
