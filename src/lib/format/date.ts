@@ -42,6 +42,11 @@ export function toInputMoment(moment: Moment, zone: string): string {
 	return at(moment, zone).toFormat("yyyy-MM-dd'T'HH:mm");
 }
 
+/** The moment that a `datetime-local` field says, on the lab's clock. */
+export function fromInputMoment(text: string, zone: string): Date {
+	return DateTime.fromISO(text, { zone }).toJSDate();
+}
+
 /** Rough age of a moment: "just now", "5 min ago", "3 h ago", then the date. */
 export function formatAgo(moment: Moment, now: Moment, zone: string): string {
 	const minutes = at(now, zone).diff(at(moment, zone), 'minutes').minutes;

@@ -15,7 +15,10 @@ export const codeSchema = z
 	.regex(
 		/^[A-Za-z0-9][A-Za-z0-9_]{0,23}$/,
 		'A code has up to 24 letters, figures and underscores, and begins with a letter or figure: R031.'
-	);
+	)
+	.refine((code) => !['new', 'paste'].includes(code.toLowerCase()), {
+		message: 'This word is the address of a page. Choose another code.'
+	});
 
 /** What is known of an animal itself. */
 export const animalFactsSchema = z.object({
@@ -39,6 +42,7 @@ export const newAnimalSchema = animalFactsSchema.extend({
 	memberSince: optionalDaySchema
 });
 
+export type AnimalFacts = z.output<typeof animalFactsSchema>;
 export type AnimalFactsInput = z.input<typeof animalFactsSchema>;
 export type NewAnimalInput = z.input<typeof newAnimalSchema>;
 export type NewAnimal = z.output<typeof newAnimalSchema>;

@@ -102,7 +102,8 @@ export const implantEditSchema = z.object({
 			z.object({
 				id: z.uuid(),
 				targetLayer: textOf(60),
-				layerBands: z.array(layerBandSchema).default([])
+				/** Left out: they stay. */
+				layerBands: z.array(layerBandSchema).optional()
 			})
 		)
 		.default([]),

@@ -12,3 +12,11 @@ export const weightSchema = z.object({
 });
 
 export type WeightInput = z.input<typeof weightSchema>;
+
+/** The same as a form sends it: the moment on the lab's clock, now when left empty. */
+export const weightFormSchema = weightSchema.omit({ implantMassG: true }).extend({
+	measuredAt: z
+		.string()
+		.regex(/^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}(:\d{2})?$/, 'Give date and time.')
+		.nullable()
+});

@@ -41,7 +41,7 @@ const SORTINGS = `SELECT d.date::text AS day, s.person_id || ' ' || s.program AS
 
 const ERRORS = `SELECT d.date::text AS day, a.median_error_cm AS "errorCm",
 		(SELECT coalesce(sum(e.stop_s - e.start_s), 0) FROM epoch e
-			WHERE e.session_id = s.id AND e.kind = 'run')::float8 AS "runS"
+			WHERE e.session_id = s.id AND e.kind = 'run' AND e.withdrawn_at IS NULL)::float8 AS "runS"
 	FROM session s JOIN day d ON d.id = s.day_id JOIN analysis a ON a.id = s.current_analysis_id
 	WHERE s.animal_id = $animalId AND s.withdrawn_at IS NULL AND a.median_error_cm IS NOT NULL`;
 

@@ -1,12 +1,13 @@
 import { Op } from 'sequelize';
 import type { FieldValue, FieldValues } from '$lib/schemas/register-descriptor';
-import { registers, type RegisterKind } from '$lib/schemas/registers';
+import { isRegisterKind, registers, type RegisterKind } from '$lib/schemas/registers';
 import { demand, type Actor } from '$lib/server/access';
 import { now } from '$lib/server/clock';
 import { Conflict, NotFound, Stale } from '$lib/server/errors';
 import { parsed } from '$lib/server/parsed';
 import { record, type Write } from '$lib/server/record';
 import { today } from './lab-clock';
+import * as members from './members';
 import { registerTables, type Row } from './register-tables';
 
 /** One row of any register: what its form and its columns show, and how it stands. */
@@ -58,6 +59,27 @@ export async function choices(by: Actor | null, kind: RegisterKind): Promise<Reg
 		value: id,
 		label: [values[nameField], values.title ?? values.designName].filter(Boolean).join(', ')
 	}));
+}
+
+/** For every field of a register's form that chooses a row or people: what it offers. */
+export async function fieldChoices(
+	by: Actor | null,
+	kind: RegisterKind
+): Promise<Record<string, RegisterChoice[]>> {
+	demand(by, 'registers.read');
+	const { fields } = registers[kind];
+	const offered = fields.map(async ({ name, kind, from }) => {
+		if (kind === 'people') return [name, await peopleChoices(by)] as const;
+		return [name, from && isRegisterKind(from) ? await choices(by, from) : []] as const;
+	});
+	return Object.fromEntries((await Promise.all(offered)).filter(([, rows]) => rows.length > 0));
+}
+
+async function peopleChoices(by: Actor): Promise<RegisterChoice[]> {
+	const people = await members.list(by);
+	return people
+		.filter((person) => !person.deactivatedAt)
+		.map(({ id, name }) => ({ value: id, label: name }));
 }
 
 export async function create(
