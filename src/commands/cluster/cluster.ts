@@ -1,11 +1,13 @@
+import { Refusal } from '../bootstrap/refusal.mjs';
 import type { Home } from '../home/home';
 import { secretsOf } from '../home/secrets';
+import { say } from '../machine/say';
 import { clusterMajor, dataFolder, ensureData, SUPERUSER } from './data-folder';
 import { findPlace, keepPlace, knownPlace } from './place';
 import { postgresPrograms } from './programs';
 import { resetSuperuserPassword } from './reset-password';
 import { APP, DATABASE, ensureRoles, OWNER, urlOf } from './roles';
-import { startServer, type ServerOptions } from './server';
+import { startServer, type RunningServer, type ServerOptions } from './server';
 import { serverUser } from './server-user';
 
 export interface ClusterUrls {
@@ -17,15 +19,15 @@ export interface ClusterUrls {
 }
 
 export interface Cluster extends ClusterUrls {
-	/** Settles when the server ends, asked to or not. */
-	ended: Promise<number>;
+	/** Rejects when the server ended and could not be started again; never settles otherwise. */
+	failed: Promise<never>;
 	stop(): Promise<void>;
 	kill(): void;
 }
 
 /**
  * The lab's own PostgreSQL: made on first use, then started. The caller holds the home's lock.
- * The server ends with this process, however that ends.
+ * The server ends with this process, however that ends; one that dies is started again.
  *
  * @param isThrowAway gives up safety on a power cut for speed; for clusters deleted afterwards
  */
@@ -57,8 +59,38 @@ export async function openCluster(home: Home, isThrowAway = false): Promise<Clus
 		await ensureRoles(clusterUrls(home, server.port).superUrl, passwords);
 	}
 	keepPlace(home, { folder: place, port: server.port });
-	const { ended, stop, kill } = server.process;
-	return { ...clusterUrls(home, server.port), ended, stop, kill };
+	return { ...clusterUrls(home, server.port), ...keepServing(server, options) };
+}
+
+/** Starts a server that died again, on the same port: those who use it know no other. */
+function keepServing({ port, process }: RunningServer, options: ServerOptions) {
+	let current = process;
+	let isStopping = false;
+	const watch = async (): Promise<never> => {
+		for (;;) {
+			const code = await current.ended;
+			if (isStopping) return new Promise<never>(() => undefined);
+			say(`The database server ended (exit ${code}); starting it again.`);
+			const next = await startServer({ ...options, port });
+			current = next.process;
+			if (isStopping || next.port !== port) await current.stop();
+			if (next.port !== port) {
+				throw new Refusal(
+					`The database server ended, and another program has taken its port ${port}. The records are safe. Start again.`
+				);
+			}
+		}
+	};
+	const failed = watch();
+	failed.catch(() => undefined);
+	return {
+		failed,
+		kill: () => current.kill(),
+		async stop() {
+			isStopping = true;
+			await current.stop();
+		}
+	};
 }
 
 function isWrongPassword(error: unknown): boolean {

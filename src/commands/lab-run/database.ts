@@ -10,8 +10,8 @@ import { backUp, isEmpty } from './backup';
 export interface LabDatabase {
 	ownerUrl: string;
 	appUrl: string;
-	/** Settles when our own server ends unasked; never for a database of somebody else's. */
-	ended: Promise<number>;
+	/** Rejects when our own server is gone for good; never for a database of somebody else's. */
+	failed: Promise<never>;
 	stop(): Promise<void>;
 	kill(): void;
 	/** Empties our own database; undefined where it is not ours to empty. */
@@ -25,7 +25,7 @@ export async function openDatabase(home: Home, isThrowAway: boolean): Promise<La
 		return {
 			ownerUrl: process.env.DATABASE_OWNER_URL || given,
 			appUrl: given,
-			ended: new Promise(() => undefined),
+			failed: new Promise<never>(() => undefined),
 			stop: async () => undefined,
 			kill: () => undefined
 		};

@@ -117,15 +117,7 @@ async function startAll({ mode, home, isThrowAway, signals, running, tell }: Run
 	};
 	const worker = keep('worker', [process.execPath, 'src/commands/run.mjs', 'worker'], program.env);
 	const pages = keep('web', program.command(web), program.env);
-	const failure = Promise.race([
-		pages.failed,
-		worker.failed,
-		database.ended.then((code): never => {
-			throw new Error(
-				`The database server ended (exit ${code}); its log is in ${home.file('logs')}`
-			);
-		})
-	]);
+	const failure = Promise.race([pages.failed, worker.failed, database.failed]);
 	failure.catch(() => undefined);
 	await step(Promise.race([failure, waitForHealth(web.address)]));
 
