@@ -12,7 +12,6 @@ const TABLE_TYPES = {
 export type FileType = keyof typeof TABLE_TYPES;
 
 const headers = z.object({
-	'content-type': z.string().max(200).optional(),
 	'content-disposition': z.string().max(1000).optional().meta({
 		description: 'Names the original: `attachment; filename="r031.npy"`.'
 	})

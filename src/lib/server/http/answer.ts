@@ -1,7 +1,15 @@
 import { error, fail, redirect, type ActionFailure, type RequestEvent } from '@sveltejs/kit';
 import { setError, superValidate, type SuperValidated } from 'sveltekit-superforms';
 import type { ValidationAdapter } from 'sveltekit-superforms/adapters';
-import { Conflict, Invalid, Refusal, TooLarge, TooMany, Unauthenticated } from '$lib/server/errors';
+import {
+	Conflict,
+	Gone,
+	Invalid,
+	Refusal,
+	TooLarge,
+	TooMany,
+	Unauthenticated
+} from '$lib/server/errors';
 
 /**
  * Turns a service's refusal into what a page answers: sign-in when nobody is signed in,
@@ -72,10 +80,11 @@ export async function press<R extends Fields | undefined>(
 	}
 }
 
-function isFormRefusal(fault: unknown): fault is Invalid | Conflict | TooMany | TooLarge {
+function isFormRefusal(fault: unknown): fault is Invalid | Conflict | Gone | TooMany | TooLarge {
 	return (
 		fault instanceof Invalid ||
 		fault instanceof Conflict ||
+		fault instanceof Gone ||
 		fault instanceof TooMany ||
 		fault instanceof TooLarge
 	);

@@ -46,10 +46,9 @@ export function endpoint<O extends Operation>(
 			key === null
 				? await perform(by)
 				: await idempotencyKeys.once(by, key, hashOf(event, text), perform);
-		return Response.json(body, {
-			status,
-			headers: { 'cache-control': 'no-store', ...answerHeaders(body as z.output<O['answer']>) }
-		});
+		// Kept or new, the body came out of this very schema.
+		const headers = answerHeaders(body as z.output<O['answer']>);
+		return Response.json(body, { status, headers: { 'cache-control': 'no-store', ...headers } });
 	};
 	return Object.assign(
 		(event: ApiEvent) =>
@@ -67,6 +66,7 @@ async function read<O extends Operation>(operation: O, { request, url, params }:
 	const isLeftOut = operation.isBodyOptional && request.body === null;
 	const text = isLeftOut ? '{}' : operation.body ? await readJsonText(request) : '';
 	const body = operation.body && parseBody(operation.body, text);
+	// Each part is parsed exactly where the operation has its schema; the compiler cannot follow that.
 	return { ...parsed, body, text } as Omit<Call<O>, 'by' | 'request'> & { text: string };
 }
 

@@ -106,6 +106,7 @@ function refusalsOf({ params, query, body, file, method, refusals }: Operation) 
 		}),
 		...(method === 'POST' && { 409: 'The record or the Idempotency-Key forbids it; see `code`' }),
 		429: 'Too many calls; wait as long as Retry-After says',
+		default: 'A fault of the server: 500 with its number, 503 while the database is away',
 		...refusals
 	};
 	return Object.fromEntries(

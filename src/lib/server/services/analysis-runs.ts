@@ -109,7 +109,8 @@ export async function finish(
 				result: analysisResult(figures, {
 					positionSha256: row.positionSha256,
 					spikesSha256: row.spikesSha256,
-					codeVersion: row.codeVersion,
+					// As the command line says it: the version that decides about figures.
+					codeVersion: row.analysisVersion,
 					startedAt: run.startedAt.toISOString(),
 					elapsedS
 				})
