@@ -9,6 +9,8 @@ export interface Visit {
 	/** Sent as a form by POST when given. */
 	form?: Record<string, string>;
 	address?: string;
+	/** What the layouts above have loaded; a guard must not lean on it. */
+	parent?: Record<string, unknown>;
 }
 
 /** A jar that remembers what a route sets. */
@@ -53,7 +55,7 @@ export function pageEvent<E = RequestEvent & ServerLoadEvent>(visit: Visit = {})
 		fetch: () => Promise.reject(new Error('A guard does not fetch')),
 		depends: () => undefined,
 		untrack: <T>(work: () => T) => work(),
-		parent: () => Promise.reject(new Error('A guard does not wait for its layout'))
+		parent: () => Promise.resolve(visit.parent ?? {})
 	};
 	return event as unknown as E;
 }

@@ -35,6 +35,8 @@ const params: Record<string, string> = {
 	kind: 'position'
 };
 
+const parent = { animal: { id: params.id, code: params.code } };
+
 /** What a route answers, thrown or returned. */
 async function answerOf(handler: Handler, event: object): Promise<unknown> {
 	try {
@@ -62,7 +64,7 @@ describe('a stranger', () => {
 	it.each(loads.map(([path, module]) => [nameOf(path), path, module] as const))(
 		'who opens %s is led to sign-in',
 		async (_, path, { load }) => {
-			const event = pageEvent({ path: `/x?from=${encodeURIComponent(path)}`, params });
+			const event = pageEvent({ path: `/x?from=${encodeURIComponent(path)}`, params, parent });
 			const answer = await answerOf(load ?? (() => null), event);
 			expect(isRedirect(answer) && answer.location).toMatch(/^\/sign-in\?next=%2Fx/);
 		}

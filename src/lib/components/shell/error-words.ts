@@ -18,6 +18,10 @@ const known: Record<number, ErrorWords> = {
 		title: 'Somebody was quicker',
 		safe: 'Nothing was overwritten. Go back, load the page again and repeat your change.'
 	},
+	410: {
+		title: 'This address opens nothing now',
+		safe: 'Nothing was changed. Each such address works once and for a limited time.'
+	},
 	413: { title: 'Too large', safe: 'Nothing was kept of it. Send a smaller file.' },
 	429: { title: 'Too many tries', safe: 'Nothing was changed. Wait a minute and try again.' },
 	503: {

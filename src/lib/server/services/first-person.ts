@@ -6,7 +6,7 @@ import { hashPassword } from '$lib/server/auth/password';
 import { takeTry } from '$lib/server/auth/rate-limits';
 import { hashSecret, newSecret } from '$lib/server/auth/secret';
 import { now } from '$lib/server/clock';
-import { Conflict, NotFound } from '$lib/server/errors';
+import { Gone, NotFound } from '$lib/server/errors';
 import { linkTo } from '$lib/server/mail/links';
 import { FIRST_PI, Invitation } from '$lib/server/models/invitation';
 import { Person } from '$lib/server/models/person';
@@ -48,7 +48,7 @@ export async function address(origin?: string): Promise<string | null> {
 	return linkTo('first', secret, origin);
 }
 
-/** @throws NotFound, TooMany; Conflict once used or past its week */
+/** @throws NotFound, TooMany; Gone once used or past its week */
 export async function check(secret: string, from: signIns.Origin): Promise<void> {
 	const found = await Invitation.findOne({
 		where: { tokenHash: hashSecret(secret), email: FIRST_PI }
@@ -97,13 +97,13 @@ export async function accept(
 function refuseUnusable(invitation: Invitation): void {
 	if (invitation.acceptedAt) throw used();
 	if (invitation.expiresAt <= now()) {
-		throw new Conflict(
+		throw new Gone(
 			'first-expired',
 			'This address has expired. Start the server again: it prints a new one.'
 		);
 	}
 }
 
-function used(): Conflict {
-	return new Conflict('first-used', 'The first person was made already. Sign in instead.');
+function used(): Gone {
+	return new Gone('first-used', 'The first person was made already. Sign in instead.');
 }

@@ -7,7 +7,7 @@ import { hashPassword } from '$lib/server/auth/password';
 import { takeTry } from '$lib/server/auth/rate-limits';
 import { hashSecret, newSecret } from '$lib/server/auth/secret';
 import { now } from '$lib/server/clock';
-import { Conflict, NotFound } from '$lib/server/errors';
+import { Conflict, Gone, NotFound } from '$lib/server/errors';
 import { invitationLetter } from '$lib/server/mail/letters';
 import { linkTo } from '$lib/server/mail/links';
 import { FIRST_PI, Invitation } from '$lib/server/models/invitation';
@@ -104,7 +104,7 @@ export async function withdraw(by: Actor | null, id: string): Promise<void> {
 	});
 }
 
-/** What the page behind the mailed address shows. @throws NotFound, Conflict, TooMany */
+/** What the page behind the mailed address shows. @throws NotFound, Gone, TooMany */
 export async function find(
 	secret: string,
 	from: signIns.Origin
@@ -170,10 +170,10 @@ async function holdOpen(
 
 function refuseClosed(invitation: Invitation): void {
 	if (invitation.acceptedAt) {
-		throw new Conflict('invitation-used', 'This invitation was accepted already. Sign in instead.');
+		throw new Gone('invitation-used', 'This invitation was accepted already. Sign in instead.');
 	}
 	if (invitation.withdrawnAt) {
-		throw new Conflict(
+		throw new Gone(
 			'invitation-withdrawn',
 			'This invitation was withdrawn. Ask the person who invited you.'
 		);
@@ -182,7 +182,7 @@ function refuseClosed(invitation: Invitation): void {
 
 function refuseExpired(invitation: Invitation): void {
 	if (invitation.expiresAt > now()) return;
-	throw new Conflict(
+	throw new Gone(
 		'invitation-expired',
 		'This invitation has expired. Ask the person who invited you to send it again.'
 	);

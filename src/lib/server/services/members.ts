@@ -1,4 +1,4 @@
-import type { Role } from '$lib/schemas/roles';
+import { ROLES, type Role } from '$lib/schemas/roles';
 import { initials } from '$lib/format/initials';
 import { demand, may, type Actor } from '$lib/server/access';
 import { now } from '$lib/server/clock';
@@ -32,6 +32,7 @@ export async function list(by: Actor | null): Promise<Member[]> {
 	return people.map((person) => ({
 		...person,
 		initials: initials(person.name),
+		roles: ROLES.filter((role) => person.roles.includes(role)),
 		isBlinded: runs ? person.isBlinded : null
 	}));
 }

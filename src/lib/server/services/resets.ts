@@ -5,7 +5,7 @@ import { forgive, takeTry } from '$lib/server/auth/rate-limits';
 import { hashSecret, newSecret } from '$lib/server/auth/secret';
 import { steadily } from '$lib/server/auth/steady';
 import { now } from '$lib/server/clock';
-import { Conflict, NotFound } from '$lib/server/errors';
+import { Gone, NotFound } from '$lib/server/errors';
 import { resetLetter } from '$lib/server/mail/letters';
 import { linkTo } from '$lib/server/mail/links';
 import { PasswordReset } from '$lib/server/models/password-reset';
@@ -62,7 +62,7 @@ export async function makeSecret(w: Write, personId: string, lastsMs: number): P
 	return secret;
 }
 
-/** Whose password the mailed address sets. @throws NotFound, Conflict, TooMany */
+/** Whose password the mailed address sets. @throws NotFound, Gone, TooMany */
 export async function find(
 	secret: string,
 	from: signIns.Origin
@@ -123,13 +123,13 @@ export async function spendAll(w: Write, personId: string): Promise<void> {
 
 function refuseUnusable(reset: PasswordReset): void {
 	if (reset.usedAt) {
-		throw new Conflict(
+		throw new Gone(
 			'reset-used',
 			'This address was used already. Your password is as it was set then; ask for a new address if you need one.'
 		);
 	}
 	if (reset.expiresAt <= now()) {
-		throw new Conflict(
+		throw new Gone(
 			'reset-expired',
 			'This address has expired; your password is unchanged. Ask for a new one.'
 		);
