@@ -45,5 +45,7 @@ export const newPasswordSchema = z
 export function isOwnAddress(password: string, email: string): boolean {
 	const given = plain(password);
 	const local = plain(email.split('@')[0]);
-	return given === plain(email) || (local !== '' && given !== '' && given.replaceAll(local, '') === '');
+	return (
+		given === plain(email) || (local !== '' && given !== '' && given.replaceAll(local, '') === '')
+	);
 }
