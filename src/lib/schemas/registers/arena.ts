@@ -85,12 +85,12 @@ export const arenas: RegisterDescriptor = {
 			name: 'endAX',
 			label: 'End A, x',
 			kind: 'figure',
-			section: 'Camera',
-			hint: 'For straight tracks, as the camera sees them: distance runs from A to B. Without ends, days cannot be compared.'
+			section: 'Ends of a straight track',
+			hint: 'As the camera sees it; distance runs from A to B. Without ends, days cannot be compared.'
 		},
-		{ name: 'endAY', label: 'End A, y', kind: 'figure', section: 'Camera' },
-		{ name: 'endBX', label: 'End B, x', kind: 'figure', section: 'Camera' },
-		{ name: 'endBY', label: 'End B, y', kind: 'figure', section: 'Camera' },
+		{ name: 'endAY', label: 'End A, y', kind: 'figure', section: 'Ends of a straight track' },
+		{ name: 'endBX', label: 'End B, x', kind: 'figure', section: 'Ends of a straight track' },
+		{ name: 'endBY', label: 'End B, y', kind: 'figure', section: 'Ends of a straight track' },
 		{ name: 'note', label: 'Note', kind: 'text', section: 'Arena' }
 	],
 	columns: [

@@ -43,7 +43,9 @@ export async function setupSteps(by: Actor): Promise<SetupStep[]> {
 			EXISTS (SELECT 1 FROM animal WHERE withdrawn_at IS NULL) AS animal,
 			EXISTS (SELECT 1 FROM implant WHERE withdrawn_at IS NULL) AS implant,
 			EXISTS (SELECT 1 FROM session WHERE withdrawn_at IS NULL) AS session,
-			(SELECT code FROM animal WHERE withdrawn_at IS NULL ORDER BY created_at LIMIT 1) AS code`,
+			(SELECT code FROM animal a WHERE withdrawn_at IS NULL ORDER BY EXISTS (
+				SELECT 1 FROM implant i WHERE i.animal_id = a.id AND i.withdrawn_at IS NULL
+			) DESC, created_at LIMIT 1) AS code`,
 		{}
 	);
 	if (found.session) return [];

@@ -31,7 +31,7 @@ export interface TodayView {
 	setup: SetupStep[];
 	toWeigh: AnimalToWeigh[] | null;
 	sessionsToday: SessionOfToday[] | null;
-	/** Of the last two weeks: without data, without an analysis, at work or failed. */
+	/** Of the two weeks before today: without data, without an analysis, at work or failed. */
 	unfinished: SessionOfToday[] | null;
 	invitations: { id: string; name: string; expiresAt: Date }[] | null;
 }
@@ -50,7 +50,7 @@ export async function view(by: Actor | null): Promise<TodayView> {
 		setup,
 		toWeigh,
 		sessionsToday: sessions?.filter((row) => row.day === clock.today) ?? null,
-		unfinished: sessions?.filter((row) => row.analysis?.state !== 'done') ?? null,
+		unfinished: sessions?.filter((row) => row.day !== clock.today && row.analysis?.state !== 'done') ?? null,
 		invitations: open?.map(({ id, name, expiresAt }) => ({ id, name, expiresAt })) ?? null
 	};
 }

@@ -5,7 +5,7 @@ import { fromInputMoment } from '$lib/format/date';
 import { joinSchema } from '$lib/schemas/animal';
 import { withdrawalSchema } from '$lib/schemas/field-rules';
 import { weightFormSchema } from '$lib/schemas/weight';
-import { may } from '$lib/server/access';
+import { demand, may } from '$lib/server/access';
 import { action, page, press } from '$lib/server/http/answer';
 import { parsed } from '$lib/server/parsed';
 import * as allocations from '$lib/server/services/allocations';
@@ -24,6 +24,7 @@ export const load: PageServerLoad = (event) =>
 	page(event, async () => {
 		const { actor } = event.locals;
 		const { code } = event.params;
+		demand(actor, 'animals.read');
 		const can = {
 			write: may(actor, 'animals.write'),
 			weigh: may(actor, 'weights.write'),

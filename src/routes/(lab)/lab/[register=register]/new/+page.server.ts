@@ -15,10 +15,11 @@ export const load: PageServerLoad = (event) =>
 		demand(actor, 'registers.write');
 		const { blank, schema } = descriptors[kind];
 		const [form, choices] = await Promise.all([
-			superValidate(blank, zod4(schema), { errors: false }),
+			superValidate(zod4(schema)),
 			registers.fieldChoices(actor, kind)
 		]);
-		return { kind, form, choices };
+		// The library starts needed figures at 0; a blank one is not 0.
+		return { kind, form: { ...form, data: { ...form.data, ...blank } }, choices };
 	});
 
 export const actions: Actions = {
