@@ -3,6 +3,7 @@ import { sequence } from '@sveltejs/kit/hooks';
 import { closeDb, db } from '$lib/server/db';
 import { readActor } from '$lib/server/hooks/actor';
 import { reportFault } from '$lib/server/hooks/fault';
+import { refuseForeignForms } from '$lib/server/hooks/same-origin';
 import { protect } from '$lib/server/hooks/security-headers';
 import { applyTheme } from '$lib/server/hooks/theme';
 import { closeQueue } from '$lib/server/jobs/enqueue';
@@ -22,6 +23,6 @@ export const init: ServerInit = async () => {
 	});
 };
 
-export const handle = sequence(protect, applyTheme, readActor);
+export const handle = sequence(protect, refuseForeignForms, applyTheme, readActor);
 
 export const handleError = reportFault;
