@@ -7,20 +7,22 @@ import { anyFreePort } from '../../src/commands/machine/ports';
 
 /**
  * The journeys run against a lab of their own, started as a person starts one: `npm start` on a
- * free port with a throw-away home, which it removes when it stops. Playwright reads this file again in each of its processes;
- * the first one's choice reaches the others through the environment.
+ * free port with a throw-away home, which it removes when it stops. While tests are written, E2E_PORT
+ * and E2E_HOME name a demo lab that runs already. Playwright reads this file again in each of its
+ * processes; the first one's choice reaches the others through the environment.
  */
 async function chooseLab() {
+	const isGiven = !!process.env.E2E_HOME && !!process.env.E2E_PORT;
 	process.env.E2E_PORT ??= String(await anyFreePort());
 	if (!process.env.E2E_HOME) {
 		process.env.E2E_HOME = mkdtempSync(join(tmpdir(), 'quarterturn-e2e-'));
 		// The database's own user must be able to pass.
 		chmodSync(process.env.E2E_HOME, 0o711);
 	}
-	return { port: process.env.E2E_PORT, home: process.env.E2E_HOME };
+	return { port: process.env.E2E_PORT, home: process.env.E2E_HOME, isGiven };
 }
 
-const { port, home } = await chooseLab();
+const { port, home, isGiven } = await chooseLab();
 const baseURL = `http://localhost:${port}`;
 const checkout = fileURLToPath(new URL('../..', import.meta.url));
 
@@ -59,6 +61,7 @@ export default defineConfig({
 		command: 'exec node src/commands/run.mjs start',
 		cwd: checkout,
 		url: `${baseURL}/api/health`,
+		reuseExistingServer: isGiven,
 		timeout: 600_000,
 		stdout: 'pipe',
 		gracefulShutdown: { signal: 'SIGTERM', timeout: 30_000 },

@@ -1,0 +1,118 @@
+import AxeBuilder from '@axe-core/playwright';
+import type { Page } from '@playwright/test';
+import { expect, test, visit, type Role } from './people';
+import { addressesOf, pageRoutes } from './routes';
+import { settle } from './settle';
+
+const THEMES = ['bench', 'evening', 'red'] as const;
+const RULES = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
+const DESK = { width: 1024, height: 900 };
+const PHONE = { width: 390, height: 844 };
+
+async function expectNothingSerious(page: Page, axe: AxeBuilder, where: string): Promise<void> {
+	const { violations } = await axe.analyze();
+	const serious = violations
+		.filter(({ impact }) => impact === 'serious' || impact === 'critical')
+		.map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html.slice(0, 160)).join(' | ')}`);
+	expect.soft(serious, `${page.url()} ${where}`).toEqual([]);
+}
+
+/** All rules once; what a theme changes is colour, so the others are asked about colour only. */
+async function expectAccessible(page: Page): Promise<void> {
+	for (const theme of THEMES) {
+		await page.locator('html').evaluate((root, name) => (root.dataset.theme = name), theme);
+		const axe = new AxeBuilder({ page });
+		if (theme === 'bench') axe.withTags(RULES);
+		else axe.withRules('color-contrast');
+		await expectNothingSerious(page, axe, theme);
+	}
+	await page.locator('html').evaluate((root) => (root.dataset.theme = 'bench'));
+}
+
+async function expectNoSidewaysScroll(page: Page): Promise<void> {
+	const excess = await page.evaluate(
+		() => document.documentElement.scrollWidth - document.documentElement.clientWidth
+	);
+	expect.soft(excess, `${page.url()} at ${page.viewportSize()?.width} px`).toBeLessThanOrEqual(0);
+}
+
+async function inspect(page: Page, address: string): Promise<void> {
+	await page.setViewportSize(DESK);
+	await visit(page, address);
+	await settle(page);
+	await expectAccessible(page);
+	await expectNoSidewaysScroll(page);
+	await page.setViewportSize({ ...DESK, width: 1600 });
+	await expectNoSidewaysScroll(page);
+	await page.setViewportSize(PHONE);
+	await expectNoSidewaysScroll(page);
+	await expectNothingSerious(page, new AxeBuilder({ page }).withTags(RULES), 'on a phone');
+}
+
+test.describe('pages of the lab', () => {
+	for (const route of pageRoutes('(lab)')) {
+		test(route, async ({ open, parts }) => {
+			const page = await open({ role: 'pi' });
+			const addresses = addressesOf(route, parts);
+			test.setTimeout(30_000 * addresses.length);
+			for (const address of addresses) await inspect(page, address);
+		});
+	}
+});
+
+test.describe('pages for those who are not signed in', () => {
+	for (const route of pageRoutes('(auth)')) {
+		test(route, async ({ page, parts }) => {
+			for (const address of addressesOf(route, parts)) await inspect(page, address);
+		});
+	}
+});
+
+test.describe('what opens over a page', () => {
+	const opened: [string, Role, string, (page: Page) => Promise<void>][] = [
+		[
+			'the palette',
+			'observer',
+			'/animals',
+			async (page) => {
+				await page.keyboard.press('Control+k');
+				await expect(page.getByRole('option', { name: 'R031' })).toBeVisible();
+			}
+		],
+		[
+			'a question before a withdrawal',
+			'pi',
+			'/animals/R031/edit',
+			async (page) => {
+				await page.getByRole('button', { name: 'Withdraw' }).click();
+				await expect(page.getByRole('dialog')).toBeVisible();
+			}
+		],
+		[
+			'a form with its mistakes',
+			'pi',
+			'/animals/new',
+			async (page) => {
+				await page.getByLabel(/^Code/).fill('not a code');
+				await page.getByRole('button', { name: 'Enter animal' }).click();
+				await expect(page.locator('[aria-invalid="true"]').first()).toBeVisible();
+			}
+		],
+		[
+			'the page that says no',
+			'observer',
+			'/animals/new',
+			async (page) => expect(page.getByText('403')).toBeVisible()
+		]
+	];
+	for (const [what, role, address, act] of opened) {
+		test(what, async ({ open }) => {
+			const page = await open({ role, viewport: DESK });
+			await visit(page, address);
+			await act(page);
+			await expectAccessible(page);
+			await page.setViewportSize(PHONE);
+			await expectNoSidewaysScroll(page);
+		});
+	}
+});
