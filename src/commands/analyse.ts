@@ -1,7 +1,7 @@
 import { rename, rm, writeFile } from 'node:fs/promises';
 import process from 'node:process';
 import { analyseSession } from '../lib/analysis/session/analyse';
-import { completeResult, type CompleteResult } from '../lib/analysis/session/complete-result';
+import { analysisResult, type AnalysisResult } from '../lib/analysis/session/analysis-result';
 import { ParameterError, sessionParameters } from '../lib/analysis/session/parameters';
 import { withBundles } from '../lib/analysis/session/with-bundles';
 import {
@@ -20,7 +20,7 @@ import { Unusable } from './analyse/unusable';
 const UNUSABLE = 2;
 
 /** Analyses one session from files, with no server and no database. */
-async function analyse(options: AnalyseOptions): Promise<CompleteResult> {
+async function analyse(options: AnalyseOptions): Promise<AnalysisResult> {
 	const startedAt = new Date();
 	const parameters = sessionParameters(options.parameters);
 	const { pxPerCm } = options;
@@ -34,7 +34,7 @@ async function analyse(options: AnalyseOptions): Promise<CompleteResult> {
 		: [];
 	const units = withBundles(spikes.value.units, rows);
 	const { result } = analyseSession({ position: position.value, units, epochs }, parameters);
-	return completeResult(
+	return analysisResult(
 		{ ...result, warnings: [...spikes.value.warnings, ...result.warnings] },
 		{
 			positionSha256: position.sha256,

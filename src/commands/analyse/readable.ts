@@ -1,8 +1,8 @@
-import type { CompleteResult } from '../../lib/analysis/session/complete-result';
+import type { AnalysisResult } from '../../lib/analysis/session/analysis-result';
 import type { Figure } from '../../lib/analysis/session/result';
 
 /** A session result as plain text: what was used, a row per unit, decoding, warnings. */
-export function readable(result: CompleteResult): string {
+export function readable(result: AnalysisResult): string {
 	const { parameters: p, inputs, occupancy, decoding } = result;
 	const seconds = occupancy.secondsByBin.reduce<number>((sum, s) => sum + (s ?? 0), 0);
 	const lines = [
@@ -26,7 +26,7 @@ function units(count: number): string {
 	return count === 1 ? '1 unit' : `${count} units`;
 }
 
-function unitTable(result: CompleteResult): string[] {
+function unitTable(result: AnalysisResult): string[] {
 	const head = ['unit', 'bundle', 'spikes', 'used', 'mean Hz', 'peak Hz', 'peak cm', 'bits/spike'];
 	const rows = [
 		[...head, 'p', 'half r', 'lap r', 'fields'],
@@ -54,7 +54,7 @@ function unitTable(result: CompleteResult): string[] {
 	return rows.map((row) => row.map((cell, c) => cell.padStart(widths[c])).join('  '));
 }
 
-function decodingLines(d: CompleteResult['decoding']): string[] {
+function decodingLines(d: AnalysisResult['decoding']): string[] {
 	if (d.medianErrorCm === null)
 		return [`Decoding: none (${units(d.unitsUsed)}, ${d.windows} windows)`];
 	const range = d.medianErrorCi95Cm

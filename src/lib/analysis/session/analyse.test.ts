@@ -1,7 +1,7 @@
 import { describe, expect, it, vi } from 'vitest';
 import { seeded } from '../random/seeded';
 import { analyseSession } from './analyse';
-import { completeResult } from './complete-result';
+import { analysisResult } from './analysis-result';
 import type { SessionInput } from './input';
 import { ParameterError, sessionParameters, type GivenParameters } from './parameters';
 import { withBundles } from './with-bundles';
@@ -261,7 +261,7 @@ describe('sessionParameters', () => {
 describe('around a result', () => {
 	it('adds digests, version and clock', () => {
 		const { result } = run(simulated({ seconds: 90, cells: 1 }));
-		const full = completeResult(result, {
+		const full = analysisResult(result, {
 			positionSha256: 'aa',
 			spikesSha256: 'bb',
 			codeVersion: '1',
