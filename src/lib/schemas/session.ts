@@ -27,16 +27,19 @@ export const epochSchema = z
 
 export type EpochInput = z.infer<typeof epochSchema>;
 
+/** Left out is another thing than empty: what is left out is copied from the rig. */
+const setting = z.string().trim().max(120, 'At most 120 characters.').optional();
+
 /** Settings of the rig as they were during the session. */
 export const rigSettingsSchema = z.object({
-	reference: textOf(120),
-	ground: textOf(120),
-	filters: textOf(120),
-	gain: textOf(120),
-	headstageSerial: textOf(120)
+	reference: setting,
+	ground: setting,
+	filters: setting,
+	gain: setting,
+	headstageSerial: setting
 });
 
-export type RigSettings = z.infer<typeof rigSettingsSchema>;
+export type RigSettings = Required<z.infer<typeof rigSettingsSchema>>;
 
 /** A session as services take it. Arena and rig by id or by name. */
 export const sessionInputSchema = z.object({
@@ -48,7 +51,7 @@ export const sessionInputSchema = z.object({
 	arena: z.string().nullable().default(null),
 	rig: z.string().nullable().default(null),
 	/** Left out, the rig's own settings are copied. */
-	rigSettings: rigSettingsSchema.partial().default({}),
+	rigSettings: rigSettingsSchema.default({}),
 	note: textOf(4000),
 	epochs: z.array(epochSchema).max(200, 'At most 200 epochs.').default([])
 });

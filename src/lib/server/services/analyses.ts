@@ -11,6 +11,7 @@ import { DataFile } from '$lib/server/models/data-file';
 import { Session } from '$lib/server/models/session';
 import { Sorting } from '$lib/server/models/sorting';
 import { SortingSession } from '$lib/server/models/sorting-session';
+import { knownId } from '$lib/server/known-id';
 import { parsed } from '$lib/server/parsed';
 import { record, type Write } from '$lib/server/record';
 import { settings } from '$lib/server/settings';
@@ -52,7 +53,7 @@ export async function get(
 	{ session }: { session?: string } = {}
 ): Promise<AnalysisView> {
 	demand(by, 'data.read');
-	const row = await Analysis.findByPk(id);
+	const row = await Analysis.findByPk(knownId(id));
 	if (!row || (session && row.sessionId !== session)) throw new NotFound();
 	const of = await Session.findByPk(row.sessionId, { attributes: ['currentAnalysisId'] });
 	return {
@@ -72,7 +73,7 @@ export async function get(
 /** How far an analysis is: what a page polls when it cannot listen. */
 export async function standing(by: Actor | null, id: string): Promise<AnalysisSummary> {
 	demand(by, 'data.read');
-	const row = await Analysis.findByPk(id, { attributes: [...SUMMARY_COLUMNS] });
+	const row = await Analysis.findByPk(knownId(id), { attributes: [...SUMMARY_COLUMNS] });
 	if (!row) throw new NotFound();
 	return toSummary(row);
 }
@@ -128,7 +129,7 @@ async function inputsOf(
 	sortingId: string | undefined,
 	{ t }: Write
 ): Promise<Inputs | { lacks: string }> {
-	const session = await Session.findByPk(sessionId, { transaction: t });
+	const session = await Session.findByPk(knownId(sessionId), { transaction: t });
 	if (!session) throw new NotFound();
 	if (session.withdrawnAt) throw new Conflict('withdrawn', 'This session is withdrawn.');
 	const position = await DataFile.findOne({
@@ -201,7 +202,7 @@ async function add(
 export async function retry(by: Actor | null, id: string): Promise<void> {
 	demand(by, may(by, 'jobs.write') ? 'jobs.write' : 'sessions.write');
 	await record(by, async (w) => {
-		const row = await Analysis.findByPk(id, { transaction: w.t, lock: true });
+		const row = await Analysis.findByPk(knownId(id), { transaction: w.t, lock: true });
 		if (!row) throw new NotFound();
 		if (row.state !== 'failed') {
 			throw new Conflict('not-failed', 'Only an analysis that failed can be tried again.');
@@ -223,7 +224,7 @@ export async function arrays(
 	{ session }: { session?: string } = {}
 ): Promise<{ content: Readable; bytes: number; sha256: string }> {
 	demand(by, 'data.read');
-	const row = await Analysis.findByPk(id, { attributes: ['sessionId', 'arraysSha256'] });
+	const row = await Analysis.findByPk(knownId(id), { attributes: ['sessionId', 'arraysSha256'] });
 	if (!row?.arraysSha256 || (session && row.sessionId !== session)) throw new NotFound();
 	return { ...(await readPart(row.arraysSha256, part)), sha256: row.arraysSha256 };
 }

@@ -9,6 +9,7 @@ import { DataFile } from '$lib/server/models/data-file';
 import type { Person } from '$lib/server/models/person';
 import { Session } from '$lib/server/models/session';
 import { Sorting } from '$lib/server/models/sorting';
+import { knownId } from '$lib/server/known-id';
 import { parsed } from '$lib/server/parsed';
 import { record } from '$lib/server/record';
 import { storage } from '$lib/server/storage';
@@ -55,7 +56,7 @@ export async function get(
 	{ session }: { session?: string } = {}
 ): Promise<DataFileView> {
 	demand(by, 'data.read');
-	const row = await DataFile.findByPk(id, { include: withUploader });
+	const row = await DataFile.findByPk(knownId(id), { include: withUploader });
 	if (!row || (session && row.sessionId !== session)) throw new NotFound();
 	return toView(row);
 }
@@ -130,7 +131,7 @@ export async function lookAgain(by: Actor | null, id: string, kind: DataKind): P
 }
 
 async function refuseClosed(sessionId: string): Promise<void> {
-	const session = await Session.findByPk(sessionId);
+	const session = await Session.findByPk(knownId(sessionId));
 	if (!session) throw new NotFound();
 	if (!session.withdrawnAt) return;
 	throw new Conflict('withdrawn', 'This session is withdrawn and takes no files.');

@@ -12,13 +12,14 @@ function named(ref: string) {
 	return { withdrawnAt: null, [Op.and]: UUID.test(ref) ? { id: ref } : isNamed };
 }
 
+/** Arenas also go by their description, which scripts know without asking. */
 async function arenaId(ref: string, field: string, transaction: Transaction): Promise<string> {
 	const arena =
-		(await Arena.findOne({ where: named(ref), transaction })) ??
-		// A script may know the arena by its description, `straight:300`, as the command line does.
+		(await Arena.findOne({ where: named(ref), attributes: ['id'], transaction })) ??
 		(await Arena.findOne({
 			where: { withdrawnAt: null, description: ref.trim() },
-			order: ['createdAt', 'id'],
+			attributes: ['id'],
+			order: ['createdAt'],
 			transaction
 		}));
 	if (arena) return arena.id;

@@ -7,6 +7,7 @@ import { Conflict, Invalid, NotFound, Stale } from '$lib/server/errors';
 import { Day } from '$lib/server/models/day';
 import { Epoch } from '$lib/server/models/epoch';
 import { Session } from '$lib/server/models/session';
+import { knownId } from '$lib/server/known-id';
 import { parsed } from '$lib/server/parsed';
 import { record, type Write } from '$lib/server/record';
 import * as days from './days';
@@ -76,7 +77,7 @@ export async function get(
 	{ animal }: { animal?: string } = {}
 ): Promise<SessionView> {
 	demand(by, 'data.read');
-	const found = await Session.findByPk(id, { include: included() });
+	const found = await Session.findByPk(knownId(id), { include: included() });
 	if (!found) throw new NotFound();
 	const view = toView(found as LoadedSession);
 	if (animal && view.animal.toUpperCase() !== animal.toUpperCase()) throw new NotFound();
@@ -202,7 +203,7 @@ const subject = (id: string) => ({ kind: 'session', id });
 
 /** The row held until the transaction ends, so that two writers cannot both think they are first. */
 async function locked(id: string, { t }: Write): Promise<Session> {
-	const session = await Session.findByPk(id, { transaction: t, lock: true });
+	const session = await Session.findByPk(knownId(id), { transaction: t, lock: true });
 	if (!session) throw new NotFound();
 	if (session.withdrawnAt) {
 		throw new Conflict('withdrawn', 'This session is withdrawn and stays as it was.');

@@ -12,6 +12,7 @@ import { DataFile } from '$lib/server/models/data-file';
 import { Session } from '$lib/server/models/session';
 import { Sorting } from '$lib/server/models/sorting';
 import { SortingSession } from '$lib/server/models/sorting-session';
+import { knownId } from '$lib/server/known-id';
 import { parsed } from '$lib/server/parsed';
 import { record, type Write } from '$lib/server/record';
 import { requestWhenReady } from './analyses';
@@ -38,7 +39,7 @@ export async function takeIn(
 ): Promise<dataFiles.DataFileView> {
 	demand(by, 'sessions.write');
 	const choice = parsed(takeInSchema, input);
-	const file = await DataFile.findByPk(id);
+	const file = await DataFile.findByPk(knownId(id));
 	if (!file) throw new NotFound();
 	if (file.withdrawnAt) throw new Conflict('withdrawn', 'This file is withdrawn.');
 	if (file.state === 'taken-in') return dataFiles.get(by, id);
