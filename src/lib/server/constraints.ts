@@ -1,4 +1,4 @@
-import { DatabaseError } from 'sequelize';
+import type { DatabaseError } from 'sequelize';
 import { Conflict } from './errors';
 
 /** Database constraints a person can run into, in words. The database decides; this only explains. */

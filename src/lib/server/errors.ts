@@ -82,9 +82,6 @@ export class RefusedFile extends Invalid {
 /** A one-time address that was used, withdrawn or has run out. */
 export class Gone extends Refusal {
 	readonly status = 410;
-	constructor(code: string, message: string) {
-		super(code, message);
-	}
 }
 
 export class TooLarge extends Refusal {

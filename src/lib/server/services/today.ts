@@ -50,7 +50,8 @@ export async function view(by: Actor | null): Promise<TodayView> {
 		setup,
 		toWeigh,
 		sessionsToday: sessions?.filter((row) => row.day === clock.today) ?? null,
-		unfinished: sessions?.filter((row) => row.day !== clock.today && row.analysis?.state !== 'done') ?? null,
+		unfinished:
+			sessions?.filter((row) => row.day !== clock.today && row.analysis?.state !== 'done') ?? null,
 		invitations: open?.map(({ id, name, expiresAt }) => ({ id, name, expiresAt })) ?? null
 	};
 }
