@@ -39,6 +39,8 @@ Object.assign(process.env, {
 	STORAGE_URL: join(home, 'uploads'),
 	// An empty setting counts as not set: a person's own environment must not reach the tests.
 	...Object.fromEntries(OUTSIDE.map((setting) => [setting, ''])),
+	// Lab days must not depend on where the tests run.
+	LAB_TIME_ZONE: 'UTC',
 	SECRET_KEY: 'only-for-tests-0123456789abcdef'
 });
 
