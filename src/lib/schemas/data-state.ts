@@ -49,5 +49,5 @@ export interface DataReading {
 		needsConfirming: boolean;
 	};
 	chosen?: ReadingChoice;
-	found?: { firstS: number; lastS: number; units?: number };
+	found?: { firstS: number; lastS: number; units?: number; warnings?: string[] };
 }

@@ -282,7 +282,7 @@ describe('a sorting', () => {
 		);
 	});
 
-	it('learns class and amplitude of its units from a table', async () => {
+	it('learns class, amplitude and bundle of its units from a table', async () => {
 		const bench = await makeBench();
 		const table = 'unit,bundle,class,amplitude_uv\n1,T01,principal,180\n9,T09,unclear,\n';
 		await expect(send(bench, 'units', table)).rejects.toThrow(/spikes first/);
@@ -291,6 +291,12 @@ describe('a sorting', () => {
 		expect(file.warnings.join(' ')).toMatch(/no such unit.*: 9\. Nothing is said of units 2\./);
 		const unit = await Unit.findOne({ where: { label: '1', class: 'principal' } });
 		expect(Number(unit?.amplitudeUv)).toBe(180);
+		const other = await makeBench();
+		await send(other, 'spikes', spikes().replace(/,T0\d|,bundle/g, ''));
+		await send(other, 'units', 'unit,bundle\n1,T01\n2,T02\n2,T03\n');
+		const [{ id }] = await sortings.list(other.by, other.sessionId);
+		const labels = await Unit.findAll({ where: { sortingId: id }, order: ['label'] });
+		expect(labels.map(({ bundleLabel }) => bundleLabel)).toEqual(['T01', null]);
 	});
 });
 
@@ -304,6 +310,17 @@ describe('an analysis', () => {
 		const view = await analyses.get(bench.by, id);
 		expect(view).toMatchObject({ state: 'queued', result: null });
 		expect(view.parameters).toMatchObject({ arena: 'straight:100', binCm: 5, shuffles: 500 });
+	});
+
+	it('asked for again with the same inputs and parameters is the one that is there', async () => {
+		const bench = await makeBench();
+		await send(bench, 'position', walk());
+		await send(bench, 'spikes', spikes());
+		const [{ id }] = await analyses.list(bench.by, bench.sessionId);
+		expect(await analyses.request(bench.by, bench.sessionId)).toEqual({ id, state: 'queued' });
+		await send(bench, 'units', 'unit,class\n1,principal\n');
+		const again = await analyses.request(bench.by, bench.sessionId);
+		expect(again.id, 'units were described since').not.toBe(id);
 	});
 
 	it('with other parameters is another row; the wrong ones name their field', async () => {

@@ -1,9 +1,11 @@
 import { isDeepStrictEqual } from 'node:util';
 import type { Readable } from 'node:stream';
+import { Op } from 'sequelize';
 import { ANALYSIS_VERSION } from '$lib/analysis/version';
 import type { AnalysisResult } from '$lib/analysis/session/analysis-result';
 import type { SessionParameters } from '$lib/analysis/session/parameters';
 import { analysisParametersSchema, type AnalysisChoices } from '$lib/schemas/analysis-parameters';
+import type { AnalysisState } from '$lib/schemas/enumerations';
 import { demand, may, type Actor } from '$lib/server/access';
 import { Conflict, Invalid, NotFound } from '$lib/server/errors';
 import { Analysis } from '$lib/server/models/analysis';
@@ -16,7 +18,7 @@ import { parsed } from '$lib/server/parsed';
 import { record, type Write } from '$lib/server/record';
 import { settings } from '$lib/server/settings';
 import { readPart } from '$lib/server/storage/result-parts';
-import { plan } from './analysis-plan';
+import { plan, type Plan } from './analysis-plan';
 import { SUMMARY_COLUMNS, toSummary, type AnalysisSummary } from './session-views';
 import { currentOf } from './sortings';
 
@@ -79,7 +81,8 @@ export async function standing(by: Actor | null, id: string): Promise<AnalysisSu
 }
 
 /**
- * Asks for an analysis; a worker computes it.
+ * Asks for an analysis; a worker computes it. What was asked for already, with the same inputs and
+ * parameters, is that analysis: computing it again would give the same figures.
  * @param choices parameters that differ from the defaults of `session@1` and of the arena
  */
 export async function request(
@@ -87,7 +90,7 @@ export async function request(
 	sessionId: string,
 	choices: unknown = {},
 	{ sortingId }: { sortingId?: string } = {}
-): Promise<{ id: string; state: 'queued' }> {
+): Promise<{ id: string; state: AnalysisState }> {
 	demand(by, 'sessions.write');
 	const given = parsed(analysisParametersSchema, choices);
 	return record(by, async (w) => {
@@ -95,26 +98,21 @@ export async function request(
 		if ('lacks' in inputs) {
 			throw new Conflict('inputs-missing', `${inputs.lacks} Take that in first; then ask again.`);
 		}
-		return { id: await add(w, by, inputs, given), state: 'queued' };
+		return add(w, by, inputs, given);
 	});
 }
 
 /**
- * Asks for the standard analysis once a session has both positions and spikes. The same inputs are
- * not computed twice, and a session without an arena waits for one.
+ * Asks for the standard analysis once a session has both positions and spikes. A session without an
+ * arena waits for one.
  */
-export async function requestWhenReady(
-	w: Write,
-	by: Actor,
-	sessionId: string
-): Promise<string | null> {
+export async function requestWhenReady(w: Write, by: Actor, sessionId: string): Promise<void> {
 	const inputs = await inputsOf(sessionId, undefined, w);
-	if ('lacks' in inputs) return null;
+	if ('lacks' in inputs) return;
 	try {
-		return await add(w, by, inputs, {}, { isOnce: true });
+		await add(w, by, inputs, {});
 	} catch (fault) {
-		if (fault instanceof Conflict && fault.code === 'no-arena') return null;
-		throw fault;
+		if (!(fault instanceof Conflict && fault.code === 'no-arena')) throw fault;
 	}
 }
 
@@ -158,25 +156,13 @@ async function add(
 	w: Write,
 	by: Actor,
 	{ session, position, spikes }: Inputs,
-	choices: AnalysisChoices,
-	{ isOnce = false } = {}
-): Promise<string> {
+	choices: AnalysisChoices
+): Promise<{ id: string; state: AnalysisState }> {
 	const { parameters, setup } = await plan(session, choices, w.t);
-	if (isOnce) {
-		const earlier = await Analysis.findAll({
-			where: {
-				sessionId: session.id,
-				sortingId: spikes.sortingId,
-				positionFileId: position.id,
-				analysisVersion: ANALYSIS_VERSION
-			},
-			attributes: ['id', 'parameters', 'setup'],
-			transaction: w.t
-		});
-		const same = earlier.find(
-			(row) => isDeepStrictEqual(row.parameters, parameters) && isDeepStrictEqual(row.setup, setup)
-		);
-		if (same) return same.id;
+	const same = await equal(session.id, spikes.sortingId, position.id, { parameters, setup }, w);
+	if (same) {
+		await w.log('analysis.request-again', subject(same.id), { sessionId: session.id });
+		return same;
 	}
 	const analysis = await Analysis.create(
 		{
@@ -195,7 +181,38 @@ async function add(
 	);
 	await w.enqueue('analyse', { analysisId: analysis.id });
 	await w.log('analysis.request', subject(analysis.id), { sessionId: session.id });
-	return analysis.id;
+	return { id: analysis.id, state: 'queued' };
+}
+
+/** An analysis of the same inputs that did not fail, asked for since the units were last described. */
+async function equal(
+	sessionId: string,
+	sortingId: string,
+	positionFileId: string,
+	wanted: Plan,
+	{ t }: Write
+): Promise<{ id: string; state: AnalysisState } | null> {
+	const described = await DataFile.max<Date | null, DataFile>('uploadedAt', {
+		where: { sessionId, kind: 'units', state: 'taken-in', withdrawnAt: null },
+		transaction: t
+	});
+	const earlier = await Analysis.findAll({
+		where: {
+			sessionId,
+			sortingId,
+			positionFileId,
+			analysisVersion: ANALYSIS_VERSION,
+			state: ['queued', 'running', 'done'],
+			...(described && { askedAt: { [Op.gt]: described } })
+		},
+		attributes: ['id', 'state', 'parameters', 'setup'],
+		order: [['askedAt', 'DESC']],
+		transaction: t
+	});
+	const same = earlier.find(({ parameters, setup }) =>
+		isDeepStrictEqual({ parameters, setup }, wanted)
+	);
+	return same ? { id: same.id, state: same.state } : null;
 }
 
 /** Tries a failed analysis again, with the same inputs and parameters. */

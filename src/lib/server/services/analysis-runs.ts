@@ -9,6 +9,7 @@ import type { AnalyseInput } from '$lib/server/jobs/tasks/analyse-task';
 import { Analysis } from '$lib/server/models/analysis';
 import { DataFile } from '$lib/server/models/data-file';
 import { Session } from '$lib/server/models/session';
+import { Sorting } from '$lib/server/models/sorting';
 import { Unit } from '$lib/server/models/unit';
 import { record, type Write } from '$lib/server/record';
 
@@ -23,6 +24,8 @@ export interface Run {
 	attempt: number;
 	lock: number;
 	startedAt: Date;
+	/** What the tables said when they were taken in. */
+	warnings: string[];
 	input: AnalyseInput;
 }
 
@@ -54,7 +57,14 @@ export async function begin(
 	);
 	if (begun === 0) return null;
 	const row = await Analysis.findByPk(id, { rejectOnEmpty: true });
-	return { id, attempt: row.attempts, lock, startedAt, input: await inputOf(row) };
+	const [input, warnings] = await Promise.all([inputOf(row), spikeWarnings(row)]);
+	return { id, attempt: row.attempts, lock, startedAt, warnings, input };
+}
+
+async function spikeWarnings({ sortingId }: Analysis): Promise<string[]> {
+	const sorting = await Sorting.findByPk(sortingId, { rejectOnEmpty: true });
+	const file = sorting.dataFileId ? await DataFile.findByPk(sorting.dataFileId) : null;
+	return file?.reading.found?.warnings ?? [];
 }
 
 async function inputOf(row: Analysis): Promise<AnalyseInput> {
@@ -88,17 +98,18 @@ export async function finish(
 ): Promise<void> {
 	const finishedAt = now();
 	const elapsedS = (finishedAt.getTime() - run.startedAt.getTime()) / 1000;
+	const warnings = [...run.warnings, ...figures.warnings];
 	await record(systemActor(), async (w) => {
 		const row = await Analysis.findOne({ where: ofRun(run), transaction: w.t, lock: true });
 		if (!row) return w.log('analysis.discard', subject(run.id), { attempt: run.attempt });
-		const { decoding, warnings } = figures;
+		const { decoding } = figures;
 		await row.update(
 			{
 				state: 'done',
 				progress: 1,
 				finishedAt,
 				workerLock: null,
-				warnings: [...warnings],
+				warnings,
 				unitsUsed: decoding.unitsUsed,
 				windows: decoding.windows,
 				medianErrorCm: decoding.medianErrorCm,
@@ -106,14 +117,17 @@ export async function finish(
 				medianErrorHighCm: decoding.medianErrorCi95Cm?.[1] ?? null,
 				chanceMedianErrorCm: decoding.chanceMedianErrorCm,
 				arraysSha256,
-				result: analysisResult(figures, {
-					positionSha256: row.positionSha256,
-					spikesSha256: row.spikesSha256,
-					// As the command line says it: the version that decides about figures.
-					codeVersion: row.analysisVersion,
-					startedAt: run.startedAt.toISOString(),
-					elapsedS
-				})
+				result: analysisResult(
+					{ ...figures, warnings },
+					{
+						positionSha256: row.positionSha256,
+						spikesSha256: row.spikesSha256,
+						// As the command line says it: the version that decides about figures.
+						codeVersion: row.analysisVersion,
+						startedAt: run.startedAt.toISOString(),
+						elapsedS
+					}
+				)
 			},
 			{ transaction: w.t }
 		);

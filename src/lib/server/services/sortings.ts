@@ -190,7 +190,7 @@ export async function putUnits(
 }
 
 /** Bundles of the animal's implants on the sorting's day, by label; a newer implant's come first. */
-async function bundleIds(
+export async function bundleIds(
 	sortingId: string,
 	transaction: Transaction
 ): Promise<Map<string, string>> {

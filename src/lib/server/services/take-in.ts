@@ -226,7 +226,8 @@ async function commitTable(
 		case 'spikes': {
 			const sortingId = await sortingFor(by, file, choice, w);
 			await sortings.putUnits(w, sortingId, table.units);
-			return { found: { ...table.span, units: table.units.length }, warnings: table.warnings };
+			const { span, units, warnings } = table;
+			return { found: { ...span, units: units.length, warnings }, warnings };
 		}
 		case 'units':
 			return { warnings: await putUnitFacts(w, file.sessionId, table.units) };

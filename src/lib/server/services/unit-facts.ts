@@ -2,10 +2,11 @@ import type { UnitRow } from '$lib/analysis/tables/units-table';
 import { Conflict } from '$lib/server/errors';
 import { Unit } from '$lib/server/models/unit';
 import type { Write } from '$lib/server/record';
-import { currentOf } from './sortings';
+import { bundleIds, currentOf } from './sortings';
 
 /**
- * Adds class, amplitude and noise from a units table to the session's current sorting.
+ * Adds class, amplitude and noise from a units table to the session's current sorting, and the
+ * bundle where the spikes named none.
  * @returns sentences for rows that fit no unit and units that no row names
  */
 export async function putUnitFacts(
@@ -20,6 +21,7 @@ export async function putUnitFacts(
 		attributes: ['id', 'label', 'bundleLabel'],
 		transaction: w.t
 	});
+	const bundles = await bundleIds(sortingId, w.t);
 	const named = new Set<string>();
 	const strangers: string[] = [];
 	for (const row of rows) {
@@ -32,7 +34,18 @@ export async function putUnitFacts(
 		for (const unit of fits) {
 			named.add(unit.id);
 			const { class: unitClass, amplitudeUv, noiseUv } = row;
-			await unit.update({ class: unitClass, amplitudeUv, noiseUv }, { transaction: w.t });
+			const isOnlyPlace = rows.filter((other) => other.unit === row.unit).length === 1;
+			const bundle = unit.bundleLabel ?? (isOnlyPlace ? row.bundle : null);
+			await unit.update(
+				{
+					class: unitClass,
+					amplitudeUv,
+					noiseUv,
+					bundleLabel: bundle,
+					bundleId: (bundle && bundles.get(bundle.toLowerCase())) ?? null
+				},
+				{ transaction: w.t }
+			);
 		}
 	}
 	const silent = units.filter(({ id }) => !named.has(id)).map(({ label }) => label);
