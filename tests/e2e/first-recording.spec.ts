@@ -134,12 +134,15 @@ test('a lab takes in its first recording and sees what its cells say', async ({ 
 		await expect(figure(decoding, 'Median error')).toHaveText(/^8\.4[56] cm \(\d+\.\d–\d+\.\d\)$/);
 		await expect(figure(decoding, 'Chance')).toHaveText(/^41\.[56]\d* cm$/);
 		await expect(figure(decoding, 'Windows, units')).toHaveText(/, 18$/);
+		// Figures are fetched when they come into view.
+		await decoding.scrollIntoViewIfNeeded();
 		await expect(decoding.getByText('Error by place')).toBeVisible();
 	});
 
 	await test.step('sees each unit on a card and all of them in the table', async () => {
 		const units = panel(page, 'Units');
 		await expect(units).toContainText('31 units, sorted along the track');
+		await units.scrollIntoViewIfNeeded();
 		await expect(units.getByRole('article').first().getByRole('img').first()).toBeVisible();
 		await expect(units.getByRole('article').filter({ hasText: 'T01-14' })).toBeVisible();
 		await units.getByText('All figures as a table').click();

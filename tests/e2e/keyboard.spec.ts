@@ -21,7 +21,7 @@ test('signs in, finds an animal and enters a weight without a mouse', async ({ p
 	await page.keyboard.type(password);
 	await page.keyboard.press('Enter');
 	await expect(page).toHaveURL(/\/$/);
-	await expect(page.getByLabel(name)).toBeVisible();
+	await expect(page.getByTitle(name)).toBeVisible();
 
 	await page.keyboard.press('Control+k');
 	await expect(page.getByRole('combobox', { name: 'Page or animal' })).toBeFocused();
@@ -112,7 +112,7 @@ test.describe('without JavaScript', () => {
 		await fill(page, { Password: password });
 		await page.getByRole('button', { name: 'Sign in' }).click();
 		await expect(page).toHaveURL(/\/animals$/);
-		await page.getByLabel(name).click();
+		await page.getByTitle(name).click();
 		await page.getByRole('button', { name: 'Sign out' }).click();
 		await expect(page).toHaveURL(/\/sign-in/);
 	});
