@@ -65,6 +65,21 @@ describe('a worker', () => {
 		expect(failed.result).toBeNull();
 	}, 60_000);
 
+	it('says plainly what one unit that never fires during running allows', async () => {
+		const bench = await makeBench();
+		// Ten seconds at rest, then running; the unit fires at rest.
+		const rest = Array.from({ length: 200 }, (_, i) => `${(i / 20).toFixed(3)},0.00\n`);
+		await send(bench, 'position', walk(120, 10).replace('x_cm\n', `x_cm\n${rest.join('')}`));
+		await send(bench, 'spikes', 'unit,t_s\n7,2.01\n7,4.5\n7,5\n');
+		const [{ id }] = await analyses.list(bench.by, bench.sessionId);
+		worker = await startWorker();
+		const { result, failure } = await ended(bench.by, id);
+		expect(failure).toBeNull();
+		expect(result?.units).toMatchObject([{ unit: '7', informationBitsPerSpike: null }]);
+		expect(result?.decoding).toMatchObject({ unitsUsed: 0, medianErrorCm: null });
+		expect(result?.warnings.join(' ')).toMatch(/position was not decoded/);
+	}, 60_000);
+
 	it('tries three times what stumbles, then says so; a person may try again', async () => {
 		const bench = await makeBench();
 		// Positions whose track is in no storage: every try stumbles.
