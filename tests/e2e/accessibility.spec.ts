@@ -95,6 +95,7 @@ test.describe('what opens over a page', () => {
 			'/animals',
 			async (page) => {
 				await page.keyboard.press('Control+k');
+				await page.getByRole('combobox', { name: 'Page or animal' }).fill('r03');
 				await expect(page.getByRole('option', { name: 'R031' })).toBeVisible();
 			}
 		],
