@@ -195,7 +195,7 @@ async function commit(
 		if (row.state === 'taken-in' || row.withdrawnAt) {
 			throw new Conflict('stale', 'Somebody took in or withdrew this file meanwhile.');
 		}
-		const { found, warnings } = await commitTable(by, row, choice, table, w);
+		const { found, warnings, isAnalysed = true } = await commitTable(by, row, choice, table, w);
 		await row.update(
 			{
 				state: 'taken-in',
@@ -209,7 +209,7 @@ async function commit(
 			{ transaction: w.t }
 		);
 		await w.log('data-file.take-in', subject(row.id), { kind: row.kind, rows: table.rows });
-		await requestWhenReady(w, by, row.sessionId);
+		if (isAnalysed) await requestWhenReady(w, by, row.sessionId);
 	});
 }
 
@@ -219,7 +219,7 @@ async function commitTable(
 	choice: TakeIn,
 	table: Table,
 	w: Write
-): Promise<{ found?: DataReading['found']; warnings: string[] }> {
+): Promise<{ found?: DataReading['found']; warnings: string[]; isAnalysed?: boolean }> {
 	switch (table.kind) {
 		case 'position':
 			return { found: table.span, warnings: table.warnings };
@@ -229,8 +229,10 @@ async function commitTable(
 			const { span, units, warnings } = table;
 			return { found: { ...span, units: units.length, warnings }, warnings };
 		}
-		case 'units':
-			return { warnings: await putUnitFacts(w, file.sessionId, table.units) };
+		case 'units': {
+			const { warnings, hasPlaced } = await putUnitFacts(w, file.sessionId, table.units);
+			return { warnings, isAnalysed: hasPlaced };
+		}
 		case 'epochs':
 			await putEpochs(by, file.sessionId, table.epochs, w);
 			return { warnings: [] };

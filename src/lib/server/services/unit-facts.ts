@@ -7,13 +7,14 @@ import { bundleIds, currentOf } from './sortings';
 /**
  * Adds class, amplitude and noise from a units table to the session's current sorting, and the
  * bundle where the spikes named none.
- * @returns sentences for rows that fit no unit and units that no row names
+ * @returns sentences for rows that fit no unit and units that no row names, and whether a unit was
+ * given a bundle: that alone changes what an analysis says
  */
 export async function putUnitFacts(
 	w: Write,
 	sessionId: string,
 	rows: readonly UnitRow[]
-): Promise<string[]> {
+): Promise<{ warnings: string[]; hasPlaced: boolean }> {
 	const sortingId = await currentOf(sessionId, w.t);
 	if (!sortingId) throw new Conflict('no-sorting', 'Take in the spikes first.');
 	const units = await Unit.findAll({
@@ -24,6 +25,7 @@ export async function putUnitFacts(
 	const bundles = await bundleIds(sortingId, w.t);
 	const named = new Set<string>();
 	const strangers: string[] = [];
+	let hasPlaced = false;
 	for (const row of rows) {
 		const fits = units.filter(
 			({ label, bundleLabel }) =>
@@ -36,6 +38,7 @@ export async function putUnitFacts(
 			const { class: unitClass, amplitudeUv, noiseUv } = row;
 			const isOnlyPlace = rows.filter((other) => other.unit === row.unit).length === 1;
 			const bundle = unit.bundleLabel ?? (isOnlyPlace ? row.bundle : null);
+			hasPlaced ||= bundle !== unit.bundleLabel;
 			await unit.update(
 				{
 					class: unitClass,
@@ -49,7 +52,7 @@ export async function putUnitFacts(
 		}
 	}
 	const silent = units.filter(({ id }) => !named.has(id)).map(({ label }) => label);
-	return [
+	const warnings = [
 		...(strangers.length > 0
 			? [
 					`The current sorting has no such unit, so these rows were left out: ${strangers.join(', ')}.`
@@ -57,4 +60,5 @@ export async function putUnitFacts(
 			: []),
 		...(silent.length > 0 ? [`Nothing is said of units ${silent.join(', ')}.`] : [])
 	];
+	return { warnings, hasPlaced };
 }
