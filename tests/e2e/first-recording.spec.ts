@@ -143,8 +143,12 @@ test('a lab takes in its first recording and sees what its cells say', async ({ 
 		const units = panel(page, 'Units');
 		await expect(units).toContainText('31 units, sorted along the track');
 		await units.scrollIntoViewIfNeeded();
-		await expect(units.getByRole('article').first().getByRole('img').first()).toBeVisible();
-		await expect(units.getByRole('article').filter({ hasText: 'T01-14' })).toBeVisible();
+		await expect(units).toContainText('3 units never fired during running');
+		await units.getByRole('button', { name: 'more of 28' }).click();
+		await expect(units.getByRole('article')).toHaveCount(28);
+		const map = units.getByLabel(/^Firing-rate map of unit T01-14, peak \d/);
+		await map.scrollIntoViewIfNeeded();
+		await expect(map).toBeVisible();
 		await units.getByText('All figures as a table').click();
 		await expect(units.getByRole('row').filter({ hasText: 'T13' }).first()).toBeVisible();
 	});

@@ -54,12 +54,12 @@ export const test = base.extend<
 	],
 	parts: [
 		async ({ playwright, cookies }, use, { project }) => {
-			const { baseURL } = project.use;
+			const { baseURL = '' } = project.use;
 			const request = await playwright.request.newContext({
 				baseURL,
 				storageState: await cookies('pi')
 			});
-			await use(await partsOf(request));
+			await use(await partsOf(request, baseURL));
 			await request.dispose();
 		},
 		{ scope: 'worker' }

@@ -20,19 +20,28 @@ function routesWith(file: string): string[] {
 export type Parts = Record<string, string>[];
 
 /** Finds the parts in the demo lab, for somebody who may read it. */
-export async function partsOf(request: APIRequestContext): Promise<Parts> {
-	const idIn = async (page: string, below: string) => {
+export async function partsOf(request: APIRequestContext, origin: string): Promise<Parts> {
+	const found = async (page: string, pattern: string) => {
 		const html = await (await request.get(page)).text();
-		const found = new RegExp(`${below}/(${ID})`).exec(html)?.[1];
-		if (!found) throw new Error(`${page} leads to nothing below ${below}.`);
-		return found;
+		const part = new RegExp(pattern).exec(html)?.[1];
+		if (!part) throw new Error(`Nothing on ${page} looks like ${pattern}.`);
+		return part;
+	};
+	const invitee = { name: 'Ada Fennel', email: `ada-${Date.now()}@example.org`, roles: 'observer' };
+	await request.post('/lab/members?/invite', { form: invitee, headers: { origin } });
+	await request.post('/reset', { form: { email: 'welfare@example.org' }, headers: { origin } });
+	const oneTime = {
+		'invitation/token': await found('/lab/mail', '/invitation/([\\w-]{20,})'),
+		'reset/token': await found('/lab/mail', '/reset/([\\w-]{20,})'),
+		// Opens nothing once the lab has people.
+		'first/token': 'nothing'
 	};
 	const code = 'R031';
-	const session = await idIn(`/animals/${code}`, `/animals/${code}/sessions`);
+	const session = await found(`/animals/${code}`, `/animals/${code}/sessions/(${ID})`);
 	return Promise.all(
 		REGISTERS.map(async (register) => {
-			const id = await idIn(`/lab/${register}`, `/lab/${register}`);
-			return { code, letter: 'A', session, register, id, token: 'nothing' };
+			const id = await found(`/lab/${register}`, `/lab/${register}/(${ID})`);
+			return { code, letter: 'A', session, register, id, ...oneTime };
 		})
 	);
 }
@@ -50,10 +59,11 @@ export function addressesOf(route: string, parts: Parts): string[] {
 		const path = route
 			.split('/')
 			.filter((piece) => piece && !piece.startsWith('('))
-			.map((piece) =>
+			.map((piece, at, pieces) =>
 				piece.replace(/\[(\w+)(?:=\w+)?\]/, (_, name: string) => {
-					if (part[name] === undefined) throw new Error(`Say what [${name}] is in ${route}.`);
-					return part[name];
+					const value = part[`${pieces[at - 1]}/${name}`] ?? part[name];
+					if (value === undefined) throw new Error(`Say what [${name}] is in ${route}.`);
+					return value;
 				})
 			);
 		return `/${path.join('/')}`;

@@ -12,5 +12,7 @@ export async function settle(page: Page): Promise<void> {
 	const { width = 1024 } = page.viewportSize() ?? {};
 	const height = await page.evaluate(() => document.documentElement.scrollHeight);
 	await page.setViewportSize({ width, height: Math.min(TALLEST_PX, Math.max(600, height)) });
+	// A result that a worker still computes comes by itself.
+	await expect(page.getByRole('progressbar')).toHaveCount(0, { timeout: 90_000 });
 	await expect(page.getByRole('status').filter({ hasText: /^Fetching/ })).toHaveCount(0);
 }
