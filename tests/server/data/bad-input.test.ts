@@ -239,10 +239,13 @@ describe('the size limit', () => {
 });
 
 describe('an upload that is cut off', () => {
-	it('leaves no file, no row and nothing aside', async () => {
+	it.each([
+		['while it is read', (cut: Readable) => setTimeout(() => cut.destroy(), 500)],
+		['before anybody reads it', (cut: Readable) => cut.destroy()]
+	])('%s leaves no file, no row and nothing aside', async (_, end) => {
 		const cut = new Readable({ read() {} });
 		cut.push(walk().slice(0, 5000));
-		setTimeout(() => cut.destroy(), 20);
+		end(cut);
 		await expect(
 			dataFiles.receive(bench.by, {
 				sessionId: bench.sessionId,

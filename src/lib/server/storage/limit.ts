@@ -31,9 +31,11 @@ export function limited(content: Readable): Readable {
 	gate.on('error', () => undefined);
 	// Not pipeline: the source of a request must not be destroyed before its answer is sent.
 	content.on('error', (fault) => gate.destroy(fault));
+	const cutOff = () => gate.destroy(content.errored ?? new Error('The upload was cut off'));
+	// A sender may be gone before we listen; such a stream says nothing any more.
+	if (content.destroyed) return cutOff();
 	content.on('close', () => {
-		if (!content.readableEnded)
-			gate.destroy(content.errored ?? new Error('The upload was cut off'));
+		if (!content.readableEnded) cutOff();
 	});
 	return content.pipe(gate);
 }
