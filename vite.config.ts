@@ -50,8 +50,8 @@ const app = defineConfig({
 					include: ['tests/server/**/*.test.ts', 'tests/routes/**/*.test.ts'],
 					globalSetup: ['tests/server/setup/cluster.ts'],
 					setupFiles: ['tests/server/setup/worker.ts'],
-					testTimeout: 20_000,
-					hookTimeout: 60_000,
+					testTimeout: 60_000,
+					hookTimeout: 120_000,
 					maxWorkers: 2
 				}
 			}

@@ -73,7 +73,7 @@ test.describe('pages of the lab', () => {
 		test(route, async ({ open, parts }) => {
 			const page = await open({ role: 'pi' });
 			const addresses = addressesOf(route, parts);
-			test.setTimeout(30_000 * addresses.length);
+			test.setTimeout(90_000 * addresses.length);
 			for (const address of addresses) await inspect(page, address);
 		});
 	}

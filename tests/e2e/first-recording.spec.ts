@@ -29,7 +29,7 @@ const figure = (place: Locator, name: string) =>
 		.first();
 
 test('a lab takes in its first recording and sees what its cells say', async ({ open }) => {
-	test.setTimeout(150_000);
+	test.setTimeout(300_000);
 
 	await test.step('a PI writes down protocol, arena and drive design', async () => {
 		const page = await open({ role: 'pi' });
