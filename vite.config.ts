@@ -29,6 +29,7 @@ const app = defineConfig({
 				test: {
 					name: 'unit',
 					environment: 'node',
+					testTimeout: 30_000,
 					include: ['src/**/*.test.ts'],
 					exclude: ['src/**/*.svelte.test.ts']
 				}
@@ -39,6 +40,7 @@ const app = defineConfig({
 				test: {
 					name: 'component',
 					environment: 'jsdom',
+					testTimeout: 30_000,
 					include: ['src/**/*.svelte.test.ts']
 				}
 			},
