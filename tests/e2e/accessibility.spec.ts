@@ -68,10 +68,17 @@ async function inspect(page: Page, address: string): Promise<void> {
 	expect.soft(await findings(page, 'bench', RULES), `${address} on a phone`).toEqual([]);
 }
 
+// One browser for all pages: each of its own would fetch the whole application again.
 test.describe('pages of the lab', () => {
+	let page: Page;
+
+	test.beforeAll(async ({ browser, baseURL, cookies }) => {
+		page = await browser.newPage({ baseURL, storageState: await cookies('pi') });
+	});
+	test.afterAll(() => page.close());
+
 	for (const route of pageRoutes('(lab)')) {
-		test(route, async ({ open, parts }) => {
-			const page = await open({ role: 'pi' });
+		test(route, async ({ parts }) => {
 			const addresses = addressesOf(route, parts);
 			test.setTimeout(90_000 * addresses.length);
 			for (const address of addresses) await inspect(page, address);

@@ -40,7 +40,7 @@ export default defineConfig({
 		baseURL,
 		browserName: 'chromium',
 		viewport: { width: 1280, height: 900 },
-		trace: 'retain-on-failure',
+		screenshot: 'only-on-failure',
 		launchOptions: {
 			executablePath: '/usr/bin/chromium',
 			args: [
