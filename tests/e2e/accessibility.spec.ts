@@ -68,37 +68,42 @@ async function inspect(page: Page, address: string): Promise<void> {
 	expect.soft(await findings(page, 'bench', RULES), `${address} on a phone`).toEqual([]);
 }
 
-// One browser for all pages: each of its own would fetch the whole application again.
-test.describe('pages of the lab', () => {
-	let page: Page;
-
+/** One browser for all pages: each with its own would fetch the whole application again. */
+function shared(role: Role | null): { page: Page } {
+	const kept = {} as { page: Page };
 	test.beforeAll(async ({ browser, baseURL, cookies }) => {
-		page = await browser.newPage({ baseURL, storageState: await cookies('pi') });
+		const storageState = role ? await cookies(role) : undefined;
+		kept.page = await browser.newPage({ baseURL, storageState });
 	});
-	test.afterAll(() => page.close());
+	test.afterAll(() => kept.page.close());
+	return kept;
+}
 
+test.describe('pages of the lab', () => {
+	const kept = shared('pi');
 	for (const route of pageRoutes('(lab)')) {
 		test(route, async ({ parts }) => {
 			const addresses = addressesOf(route, parts);
-			test.setTimeout(90_000 * addresses.length);
-			for (const address of addresses) await inspect(page, address);
+			test.setTimeout(30_000 * addresses.length);
+			for (const address of addresses) await inspect(kept.page, address);
 		});
 	}
 });
 
 test.describe('pages for those who are not signed in', () => {
+	const kept = shared(null);
 	for (const route of pageRoutes('(auth)')) {
-		test(route, async ({ page, parts }) => {
-			for (const address of addressesOf(route, parts)) await inspect(page, address);
+		test(route, async ({ parts }) => {
+			for (const address of addressesOf(route, parts)) await inspect(kept.page, address);
 		});
 	}
 });
 
 test.describe('what opens over a page', () => {
-	const opened: [string, Role, string, (page: Page) => Promise<void>][] = [
+	const kept = shared('pi');
+	const opened: [string, string, (page: Page) => Promise<void>][] = [
 		[
 			'the palette',
-			'observer',
 			'/animals',
 			async (page) => {
 				await page.keyboard.press('Control+k');
@@ -108,7 +113,6 @@ test.describe('what opens over a page', () => {
 		],
 		[
 			'a question before a withdrawal',
-			'pi',
 			'/animals/R031/edit',
 			async (page) => {
 				await page.getByRole('button', { name: 'Withdraw' }).click();
@@ -117,7 +121,6 @@ test.describe('what opens over a page', () => {
 		],
 		[
 			'a form with its mistakes',
-			'pi',
 			'/animals/new',
 			async (page) => {
 				await page.getByLabel(/^Code/).fill('not a code');
@@ -126,15 +129,15 @@ test.describe('what opens over a page', () => {
 			}
 		],
 		[
-			'the page that says no',
-			'observer',
-			'/animals/new',
-			async (page) => expect(page.getByText('403')).toBeVisible()
+			'a page that is not there',
+			'/animals/NOBODY',
+			async (page) => expect(page.getByText('404')).toBeVisible()
 		]
 	];
-	for (const [what, role, address, act] of opened) {
-		test(what, async ({ open }) => {
-			const page = await open({ role, viewport: DESK });
+	for (const [what, address, act] of opened) {
+		test(what, async () => {
+			const { page } = kept;
+			await page.setViewportSize(DESK);
 			await visit(page, address);
 			await act(page);
 			await bringAxe(page);
