@@ -2,10 +2,12 @@ import { execFile } from 'node:child_process';
 import { fileURLToPath } from 'node:url';
 import { promisify } from 'node:util';
 import { expect, test } from '@playwright/test';
+import { TAG } from './names';
 
 const checkout = fileURLToPath(new URL('../..', import.meta.url));
 const recording = (file: string) => `tests/fixtures/ca1-linear-track/${file}`;
 const ARENA = 'straight:300';
+const ANIMAL = `SHELL${TAG}`;
 
 async function run(words: string[], env: NodeJS.ProcessEnv = {}): Promise<string> {
 	const [program, ...args] = words;
@@ -39,14 +41,14 @@ test('four calls from a shell give the figures of the command line', async ({
 	const token = await makeToken('write');
 	const made = await request.post('/api/v1/animals', {
 		headers: { authorization: `Bearer ${token}` },
-		data: { code: 'SHELL1', species: 'rat', sex: 'unknown', note: 'Open recording, by script.' }
+		data: { code: ANIMAL, species: 'rat', sex: 'unknown', note: 'Open recording, by script.' }
 	});
 	expect(made.status()).toBe(201);
 
 	const answer = await run(['tests/e2e/four-calls.sh'], {
 		LAB: baseURL,
 		TOKEN: token,
-		ANIMAL: 'SHELL1',
+		ANIMAL,
 		SESSION: JSON.stringify({
 			startsAt: '2026-03-02T10:00:00Z',
 			arena: ARENA,

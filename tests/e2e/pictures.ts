@@ -14,9 +14,9 @@ const WINDOWS = [
 	{ width: 1600, height: 1000 }
 ];
 
-/** "animals-R031-implants-A" from its address; ids of the demo lab change with each filling. */
+/** "animals-R031-implants-A" from its address; ids and one-time words change with each lab. */
 function nameOf(address: string): string {
-	const words = address.replace(/[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}/g, 'id').split('/');
+	const words = address.replace(/[\w-]{20,}/g, 'id').split('/');
 	return words.filter(Boolean).join('-') || 'today';
 }
 
