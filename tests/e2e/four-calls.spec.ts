@@ -1,31 +1,10 @@
-import { execFile } from 'node:child_process';
-import { fileURLToPath } from 'node:url';
-import { promisify } from 'node:util';
 import { expect, test } from '@playwright/test';
 import { TAG } from './names';
+import { command, makeToken, run } from './shell';
 
-const checkout = fileURLToPath(new URL('../..', import.meta.url));
 const recording = (file: string) => `tests/fixtures/ca1-linear-track/${file}`;
 const ARENA = 'straight:300';
 const ANIMAL = `SHELL${TAG}`;
-
-async function run(words: string[], env: NodeJS.ProcessEnv = {}): Promise<string> {
-	const [program, ...args] = words;
-	const { stdout } = await promisify(execFile)(program, args, {
-		cwd: checkout,
-		env: { ...process.env, ...env },
-		maxBuffer: 64 * 1024 * 1024
-	});
-	return stdout;
-}
-
-const command = (...words: string[]) => [process.execPath, 'src/commands/run.mjs', ...words];
-
-const makeToken = async (scope: 'read' | 'write') => {
-	const who = ['--email', 'experimenter@example.org', '--scope', scope, '--days', '1'];
-	const env = { QUARTERTURN_HOME: process.env.E2E_HOME };
-	return (await run(command('lab', 'token', 'create', ...who), env)).trim();
-};
 
 /** The result without what tells one run from another. */
 function figuresOf(result: Record<string, unknown>) {
