@@ -77,7 +77,9 @@ async function runStep(
 	onStart: (bound: BoundProcess) => void
 ): Promise<boolean> {
 	try {
-		if (step.needs && !findProgram(step.needs.name)) await installPackage(step.needs);
+		for (const wanted of step.needs ?? []) {
+			if (!findProgram(wanted.name)) await installPackage(wanted);
+		}
 	} catch (error) {
 		if (!(error instanceof Refusal)) throw error;
 		console.log(error.message);

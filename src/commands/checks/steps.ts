@@ -1,5 +1,5 @@
 import { join } from 'node:path';
-import { CHROMIUM } from '../machine/debian';
+import { CHROMIUM, CURL } from '../machine/debian';
 import type { DebianPackage } from '../machine/debian';
 
 /** How the tests of a step are counted: from a report it writes, or as the one check it is. */
@@ -10,7 +10,7 @@ export interface Step {
 	/** What a person learns when it fails. */
 	about: string;
 	count: Count;
-	needs?: DebianPackage;
+	needs?: DebianPackage[];
 	command(reportFile: string): { words: string[]; env?: NodeJS.ProcessEnv };
 }
 
@@ -71,7 +71,7 @@ export const STEPS: Step[] = [
 		name: 'browser',
 		about: 'journeys and accessibility in Chromium against a lab of their own',
 		count: 'playwright',
-		needs: CHROMIUM,
+		needs: [CHROMIUM, CURL],
 		command: (reportFile) => ({
 			words: [bin('playwright'), 'test', '--config', 'tests/e2e/playwright.config.ts'],
 			env: { PLAYWRIGHT_JSON_OUTPUT_NAME: reportFile }

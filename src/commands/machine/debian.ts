@@ -27,6 +27,8 @@ export const POSTGRES: DebianPackage = {
 
 export const CHROMIUM: DebianPackage = { name: 'chromium', purpose: 'the browser tests' };
 
+export const CURL: DebianPackage = { name: 'curl', purpose: 'the test of the API from a shell' };
+
 /** Installs a Debian package, or refuses with the line a person has to run. */
 export async function installPackage(wanted: DebianPackage): Promise<void> {
 	const script = [wanted.prepare, aptLine('update'), aptLine(`install ${wanted.name}`)]

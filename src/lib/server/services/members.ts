@@ -37,6 +37,17 @@ export async function list(by: Actor | null): Promise<Member[]> {
 	}));
 }
 
+/**
+ * Those who may be named as surgeon.
+ * @param named stays in the list although that person may no longer be
+ */
+export async function surgeons(by: Actor | null, named?: string): Promise<Member[]> {
+	const people = await list(by);
+	const operates = ({ roles, deactivatedAt }: Member) =>
+		!deactivatedAt && (roles.includes('surgeon') || roles.includes('pi'));
+	return people.filter((person) => person.id === named || operates(person));
+}
+
 export async function grant(by: Actor | null, personId: string, role: Role): Promise<void> {
 	demand(by, 'members.write');
 	refuseRoleChange(by, personId, [role]);

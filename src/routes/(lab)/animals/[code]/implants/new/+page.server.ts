@@ -16,18 +16,15 @@ export const load: PageServerLoad = (event) =>
 	page(event, async () => {
 		const { actor } = event.locals;
 		demand(actor, 'implants.write');
-		const [people, designs, drives, form] = await Promise.all([
-			members.list(actor),
+		const [surgeons, designs, drives, form] = await Promise.all([
+			members.surgeons(actor),
 			registers.list(actor, 'drive-designs'),
 			registers.list(actor, 'drives'),
 			superValidate(zod4(implantFormSchema))
 		]);
 		return {
 			form,
-			surgeons: people
-				.filter((person) => !person.deactivatedAt)
-				.filter(({ roles }) => roles.includes('surgeon') || roles.includes('pi'))
-				.map(({ id, name }) => ({ value: id, label: name })),
+			surgeons: surgeons.map(({ id, name }) => ({ value: id, label: name })),
 			designs: designs.map(({ values }) => ({
 				value: String(values.name),
 				label: `${values.name}, ${values.pitchUm} µm per turn, ${values.travelMm} mm`

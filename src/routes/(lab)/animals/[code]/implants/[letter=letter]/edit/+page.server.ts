@@ -18,10 +18,8 @@ export const load: PageServerLoad = (event) =>
 		const { actor } = event.locals;
 		const { code, letter } = event.params;
 		demand(actor, 'implants.write');
-		const [implant, people] = await Promise.all([
-			implants.get(actor, code, letter),
-			members.list(actor)
-		]);
+		const implant = await implants.get(actor, code, letter);
+		const surgeons = await members.surgeons(actor, implant.surgeon.id);
 		const bundles = implant.sites
 			.flatMap((site) => site.carriages)
 			.flatMap((carriage) => carriage.bundles);
@@ -43,12 +41,7 @@ export const load: PageServerLoad = (event) =>
 			sites: implant.sites.map(({ label }) => label),
 			bundles: bundles.map((bundle) => bundle.code),
 			letter: implant.letter,
-			surgeons: people
-				.filter(
-					({ id, roles }) =>
-						id === values.surgeon || roles.includes('surgeon') || roles.includes('pi')
-				)
-				.map(({ id, name }) => ({ value: id, label: name }))
+			surgeons: surgeons.map(({ id, name }) => ({ value: id, label: name }))
 		};
 	});
 
