@@ -13,7 +13,8 @@ import { makeToken } from './shell';
 
 const MINUTES = 60;
 const UNITS = 120;
-const SIDE_CM = 100;
+/** The demo lab's open arena. */
+const BOX = { name: 'rectangle:100x80', widthCm: 100, heightCm: 80 };
 const LEAST_BYTES = 100e6;
 const MOST_RSS_MIB = 400;
 const PANEL_S = 30;
@@ -30,10 +31,9 @@ function hour(folder: string) {
 		fieldDriftCm: 0,
 		silentFrom: {}
 	};
-	const place = { name: 'box', widthCm: SIDE_CM, heightCm: SIDE_CM };
-	const cells = cellsOfDay(story, 0, place).map((cell) => ({ ...cell, baseHz: cell.baseHz + 16 }));
+	const cells = cellsOfDay(story, 0, BOX).map((cell) => ({ ...cell, baseHz: cell.baseHz + 16 }));
 	expect(cells).toHaveLength(UNITS);
-	const path = runOpen(SIDE_CM, SIDE_CM, MINUTES * 60, seeded(5, 'path'));
+	const path = runOpen(BOX.widthCm, BOX.heightCm, MINUTES * 60, seeded(5, 'path'));
 	const { positionCsv, spikesCsv } = recordRun(path, cells, 5, { xCm: 0, yCm: 0 });
 	writeFileSync(join(folder, 'position.csv'), positionCsv);
 	writeFileSync(join(folder, 'spikes.csv'), spikesCsv);
@@ -96,7 +96,7 @@ test('an hour of 120 units, 100 MB of spikes, is a panel in half a minute', asyn
 	await request.post('/api/v1/animals', { headers, data: animal });
 	const made = await request.post(`/api/v1/animals/${code}/sessions`, {
 		headers,
-		data: { startsAt: '2026-03-02T10:00:00Z', arena: `square:${SIDE_CM}`, simulated: true }
+		data: { startsAt: '2026-03-02T10:00:00Z', arena: BOX.name }
 	});
 	expect(made.status(), await made.text()).toBe(201);
 	const { id } = (await made.json()) as { id: string };
