@@ -31,7 +31,7 @@ function hour(folder: string) {
 		fieldDriftCm: 0,
 		silentFrom: {}
 	};
-	const cells = cellsOfDay(story, 0, BOX).map((cell) => ({ ...cell, baseHz: cell.baseHz + 16 }));
+	const cells = cellsOfDay(story, 0, BOX).map((cell) => ({ ...cell, baseHz: cell.baseHz + 11 }));
 	expect(cells).toHaveLength(UNITS);
 	const path = runOpen(BOX.widthCm, BOX.heightCm, MINUTES * 60, seeded(5, 'path'));
 	const { positionCsv, spikesCsv } = recordRun(path, cells, 5, { xCm: 0, yCm: 0 });
