@@ -7,7 +7,7 @@ import { metricOf } from './metric';
 import { parseArena } from './parse-arena';
 import { placeInArena } from './place-in-arena';
 import { projectOnPieces, segmentsOf } from './project-on-pieces';
-import { ringPosition, ringStep, unwrapRing } from './ring';
+import { ringOffset, ringPosition, ringStep, unwrapRing } from './ring';
 
 const FILE = '01_position.json';
 const always = () => true;
@@ -28,10 +28,13 @@ describe('ring', () => {
 	it('equals numpy on random pairs', () => {
 		const { input, expected, tol } = referenceCase<
 			{ C: number; a: number[]; b: number[] },
-			{ signed: number[] }
+			{ signed: number[]; distance: number[] }
 		>(FILE, 'circular_distance');
 		const got = input.a.map((a, i) => ringStep(a, input.b[i], input.C));
 		expect(worstDifference(got, expected.signed)).toBeLessThan(tol);
+		const metric = metricOf(parseArena(`ring:${input.C}`));
+		const ways = input.a.map((a, i) => metric(a, NaN, input.b[i], NaN));
+		expect(worstDifference(ways, expected.distance)).toBeLessThan(tol);
 	});
 
 	it('adds up laps as numpy.unwrap does', () => {
@@ -49,12 +52,16 @@ describe('ring', () => {
 	it('linearises a circle as atan2 gives it, with centre and zero known', () => {
 		const { input, expected, tol } = referenceCase<
 			{ R: number; cx: number; cy: number; theta0Deg: number; xy: [number, number][] },
-			{ s: number[]; circumference: number }
+			{ s: number[]; radialError: number[]; circumference: number }
 		>(FILE, 'circle_linearise');
 		const centre = { xCm: input.cx, yCm: input.cy };
 		const zero = (input.theta0Deg * Math.PI) / 180;
-		const got = input.xy.map(([x, y]) => ringPosition(x, y, centre, expected.circumference, zero));
+		const around = 2 * Math.PI * input.R;
+		expect(Math.abs(around - expected.circumference)).toBeLessThan(tol);
+		const got = input.xy.map(([x, y]) => ringPosition(x, y, centre, around, zero));
 		expect(worstDifference(got, expected.s)).toBeLessThan(tol);
+		const off = input.xy.map(([x, y]) => ringOffset(x, y, centre, around));
+		expect(worstDifference(off, expected.radialError)).toBeLessThan(tol);
 	});
 
 	it('finds the centre of a circle from its points', () => {
@@ -84,7 +91,7 @@ describe('projection on a polyline', () => {
 	it('equals clamped projection in numpy', () => {
 		const { input, expected, tol } = referenceCase<
 			{ vertices: number[][]; xy: [number, number][] },
-			{ s: number[]; distance: number[]; segment: number[] }
+			{ s: number[]; distance: number[]; segment: number[]; totalLength: number }
 		>(FILE, 'polyline_project');
 		const feet = input.xy.map(([x, y]) => projectOnPieces(polyline(input.vertices), x, y));
 		expect(
@@ -100,6 +107,8 @@ describe('projection on a polyline', () => {
 			)
 		).toBeLessThan(tol);
 		expect(feet.map((f) => f.piece)).toEqual(expected.segment);
+		const { startCm, lengthCm } = polyline(input.vertices)[2];
+		expect(startCm + lengthCm).toBe(expected.totalLength);
 	});
 });
 
@@ -150,6 +159,14 @@ describe('branched maze', () => {
 		const { xCm } = placeInArena(arena, metric, x, y, always);
 		expect(xCm[2]).toBeLessThan(60);
 		expect(xCm[4]).toBeCloseTo(90, 9);
+	});
+
+	it('lets an animal that was out of sight come back on any arm', () => {
+		const hairpin = parseArena('tree:0,0>60,0;60,0>60,10;60,10>0,10');
+		const x = Float64Array.of(5, NaN, 10);
+		const y = Float64Array.of(0, NaN, 10);
+		const { xCm } = placeInArena(hairpin, metricOf(hairpin), x, y, always);
+		expect(xCm[2]).toBeCloseTo(120, 9);
 	});
 
 	it('cuts every piece into bins of its own', () => {

@@ -36,3 +36,13 @@ export function ringPosition(
 	const angle = Math.atan2(yCm - centre.yCm, xCm - centre.xCm) - zeroAngle;
 	return (lengthCm * mod(angle, 2 * Math.PI)) / (2 * Math.PI);
 }
+
+/** How far outside (above 0) or inside (below 0) the circle of a ring a point lies, cm. */
+export function ringOffset(
+	xCm: number,
+	yCm: number,
+	centre: { readonly xCm: number; readonly yCm: number },
+	lengthCm: number
+): number {
+	return Math.hypot(xCm - centre.xCm, yCm - centre.yCm) - lengthCm / (2 * Math.PI);
+}

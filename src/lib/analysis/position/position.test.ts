@@ -54,12 +54,6 @@ describe('speedOf', () => {
 	const line = metricOf(parseArena('straight:100'));
 	const plane = metricOf(parseArena('rectangle:100x100'));
 
-	it('is two-sided inside and one-sided at the ends (hand-worked)', () => {
-		const tS = Float64Array.of(0, 0.1, 0.2, 0.3, 0.4);
-		const got = speedOf(tS, Float64Array.of(0, 1, 3, 6, 10), none(5), new Int32Array(5), 1, line);
-		expect(worstDifference(got, [10, 15, 25, 35, 40])).toBeLessThan(1e-9);
-	});
-
 	it('equals numpy.gradient on an even clock', () => {
 		const { input, expected, tol } = referenceCase<
 			{ dt: number; xy: [number, number][] },
