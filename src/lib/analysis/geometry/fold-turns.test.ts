@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
+import { worstDifference } from '../../../../tests/factories/reference';
 import { seeded } from '../random/seeded';
 import { foldTurns } from './fold-turns';
 
@@ -55,5 +56,48 @@ describe('foldTurns', () => {
 		expect(() => foldTurns([1], { pitchUm: 0, backlashUm: 0 })).toThrow(RangeError);
 		expect(() => foldTurns([1], { pitchUm: 300, backlashUm: -1 })).toThrow(RangeError);
 		expect(() => foldTurns([1], { pitchUm: NaN, backlashUm: 0 })).toThrow(RangeError);
+	});
+});
+
+describe('a ledger of turns', () => {
+	const random = seeded(31);
+	/** Sixteenths, so that sums are exact. */
+	const ledger = () => Array.from({ length: 40 }, () => (random.below(33) - 16) / 16);
+	const lastOf = (turns: number[]) => {
+		const { screwUm, carriageUm } = foldTurns(turns, settings);
+		return [screwUm.at(-1), carriageUm.at(-1)];
+	};
+
+	it('ends alike when any turn is done as two in the same direction', () => {
+		for (let round = 0; round < 30; round++) {
+			const turns = ledger();
+			const at = random.below(turns.length);
+			const part = turns[at] * (random.below(5) / 4);
+			const split = [...turns.slice(0, at), part, turns[at] - part, ...turns.slice(at + 1)];
+			expect(lastOf(split)).toEqual(lastOf(turns));
+		}
+	});
+
+	it('folds a ledger in two parts as in one, going on from where the first part left off', () => {
+		for (let round = 0; round < 30; round++) {
+			const turns = ledger();
+			const whole = foldTurns(turns, settings);
+			// From a downward turn with the slack taken up the rest is a ledger of its own.
+			const cut = turns.findIndex(
+				(t, i) => i > 10 && t > 0 && whole.screwUm[i] === whole.carriageUm[i]
+			);
+			expect(cut).toBeGreaterThan(10);
+			const rest = foldTurns(turns.slice(cut + 1), { ...settings, startUm: whole.screwUm[cut] });
+			const tail = [...whole.carriageUm.slice(cut + 1)];
+			expect(worstDifference(rest.carriageUm, tail)).toBeLessThan(1e-9);
+		}
+	});
+
+	it('never moves the carriage against the turn', () => {
+		const turns = ledger();
+		const { carriageUm } = foldTurns(turns, settings);
+		for (let i = 1; i < turns.length; i++) {
+			expect((carriageUm[i] - carriageUm[i - 1]) * turns[i]).toBeGreaterThanOrEqual(0);
+		}
 	});
 });

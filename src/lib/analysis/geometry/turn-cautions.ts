@@ -1,4 +1,5 @@
 import type { ScrewSettings } from './fold-turns';
+import { isTravelLow } from './travel-left';
 
 /** Why a turn should be looked at twice before it is done. */
 export type TurnCaution = 'more-than-one-turn' | 'reverses' | 'little-travel-left';
@@ -19,6 +20,6 @@ export function turnCautions(
 	if (Math.abs(turns) > 1) cautions.push('more-than-one-turn');
 	// A first turn back reverses too: the screw stands engaged downwards at surgery.
 	if (turns < 0 ? last >= 0 : last < 0 && turns > 0) cautions.push('reverses');
-	if (travelLeftUm < smallestStepTurns * pitchUm + 100) cautions.push('little-travel-left');
+	if (isTravelLow(travelLeftUm, smallestStepTurns * pitchUm)) cautions.push('little-travel-left');
 	return cautions;
 }
