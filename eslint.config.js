@@ -46,6 +46,7 @@ export default ts.config(
 			'.quarterturn/',
 			'uploads/',
 			'static/',
+			'src/kernel/',
 			'test-results/',
 			'tests/fixtures/',
 			'tests/reports/'

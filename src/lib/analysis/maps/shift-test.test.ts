@@ -10,6 +10,9 @@ import { occupancyInto } from './occupancy';
 import { rateMapper } from './rate-map';
 import { rawRates } from './raw-rates';
 import { drawShifts, shiftTest } from './shift-test';
+import { shiftedFigures } from './shifted-figures';
+import { shiftedRawInformation } from './shifted-raw-information';
+import { shiftedSmoothedInformation } from './shifted-smoothed-information';
 import { smoothedInformation } from './smoothed-information';
 import { smootherOf } from './smoother';
 
@@ -53,22 +56,24 @@ describe('shiftTest', () => {
 		);
 		const cells = spikeCells(kept, spikes, samples, tS, all);
 		const shifts = Int32Array.from(input.shiftsS, (shift) => Math.round(shift / cellS));
-		const test = shiftTest(kept, cells, shifts, bins.count, expected.observedBitsPerSpike, bits);
-		const unshifted = shiftTest(kept, cells, Int32Array.of(0), bins.count, NaN, bits);
-		expect(unshifted.nullValues[0]).toBeCloseTo(expected.observedBitsPerSpike, 9);
-		expect(worstDifference(test.nullValues, expected.nullBitsPerSpike)).toBeLessThan(1e-9);
-		expect(test.p).toBe(expected.p);
-		expect(test.nullMean).toBeCloseTo(expected.nullMean, 9);
+		const either = [
+			shiftedFigures(kept, shifts, bins.count, bits)(cells),
+			shiftedRawInformation(kept, shifts, occupancyS, cells.length)(cells)
+		];
+		for (const values of either) {
+			expect(worstDifference(values, expected.nullBitsPerSpike)).toBeLessThan(1e-9);
+			const test = shiftTest(expected.observedBitsPerSpike, values);
+			expect(test.p).toBe(expected.p);
+			expect(test.nullMean).toBeCloseTo(expected.nullMean, 9);
+		}
+		const unshifted = shiftedFigures(kept, Int32Array.of(0), bins.count, bits)(cells);
+		expect(unshifted[0]).toBeCloseTo(expected.observedBitsPerSpike, 9);
 	});
 
 	it('never reports p = 0 (Phipson and Smyth 2010)', () => {
-		const kept = evenTime(Array<number>(2000).fill(0), 0.1, 0.1);
 		const values = Float64Array.from({ length: 1000 }, (_, m) => (m < 12 ? 1 : 0));
-		let m = 0;
-		const figure = () => values[m++];
-		const shifts = new Int32Array(1000).fill(300);
-		expect(shiftTest(kept, Int32Array.of(1), shifts, 1, 1, figure).p).toBeCloseTo(0.012987013, 9);
-		const few = shiftTest(kept, Int32Array.of(1), shifts.subarray(0, 99), 1, 5, () => 0);
+		expect(shiftTest(1, values).p).toBeCloseTo(0.012987013, 9);
+		const few = shiftTest(5, new Float64Array(99));
 		expect(few.p).toBe(0.01);
 	});
 
@@ -80,6 +85,34 @@ describe('shiftTest', () => {
 		const short = evenTime(Array<number>(479).fill(0), 0.125, 0.125);
 		expect(drawShifts(short, 50, seeded(1))).toHaveLength(0);
 	});
+});
+
+describe('shifted information, compiled', () => {
+	const grounds = ['rectangle:40x30', 'rectangle:51x7', 'straight:180', 'ring:90', 'disc:60'];
+	it.each(grounds.flatMap((arena) => [0, 3, 5].map((sigma) => [arena, sigma] as const)))(
+		'equals the plain way on %s, smoothed by %s cm',
+		(text, sigmaCm) => {
+			const arena = parseArena(text);
+			const bins = binsOf(arena, 2);
+			const smooth = smootherOf(arena, bins, sigmaCm, 'zero');
+			const random = seeded(5);
+			const bin = Array.from({ length: 3000 }, () => random.below(Math.ceil(0.8 * bins.count)));
+			const kept = evenTime(bin, 0.1, 0.1);
+			const occupancyS = new Float64Array(bins.count);
+			for (const k of bin) occupancyS[k] += 0.1;
+			const shifts = drawShifts(kept, 7, random);
+			const compiled = shiftedSmoothedInformation(kept, shifts, occupancyS, smooth, 0.15, 900);
+			const figure = smoothedInformation(occupancyS, smooth, 0.15);
+			const plain = shiftedFigures(kept, shifts, bins.count, figure);
+			for (const spikes of [900, 31, 1, 0]) {
+				const cells = Int32Array.from({ length: spikes }, () => random.below(3000)).sort();
+				const known = plain(cells);
+				expect(compiled(cells).map(Number.isNaN)).toEqual(known.map(Number.isNaN));
+				const defined = (values: Float64Array) => values.filter((value) => !Number.isNaN(value));
+				expect(worstDifference(defined(compiled(cells)), defined(known))).toBeLessThan(1e-12);
+			}
+		}
+	);
 });
 
 describe('keptTime', () => {

@@ -33,49 +33,21 @@ const ROUNDING = 1e-12;
 /**
  * Circular-shift test: all spikes of a unit are moved along the kept time by one amount, wrapping at
  * its end. That keeps bursts and breaks the link to place. p follows Phipson and Smyth 2010.
- * @param cells  cell of each spike
- * @param shifts in cells, each in [0, kept.cells]
- * @param figure of counts per bin (the array is reused, do not keep it)
- * @param bins   number of bins
+ * @param observed   figure of the unit as recorded
+ * @param nullValues the same of its shifted spikes
  * @returns p is NaN when the observed figure is NaN or there are no shifts
- * Cost: O(shifts · (spikes + figure)).
  */
-export function shiftTest(
-	kept: KeptTime,
-	cells: Int32Array,
-	shifts: Int32Array,
-	bins: number,
-	observed: number,
-	figure: (counts: Float64Array) => number
-): ShiftTest {
-	const nullValues = new Float64Array(shifts.length);
-	// Two tallies in turn: spikes of a burst fall into one bin, and a counter that was just written
-	// is slow to read back.
-	const even = new Int32Array(bins);
-	const odd = new Int32Array(bins);
-	const pairs = cells.length & ~1;
-	const counts = new Float64Array(bins);
-	const { binTwice } = kept;
+export function shiftTest(observed: number, nullValues: Float64Array): ShiftTest {
 	let atLeast = 0;
 	let sum = 0;
-	for (let m = 0; m < shifts.length; m++) {
-		const shift = shifts[m];
-		even.fill(0);
-		odd.fill(0);
-		for (let k = 0; k < pairs; k += 2) {
-			even[binTwice[cells[k] + shift]]++;
-			odd[binTwice[cells[k + 1] + shift]]++;
-		}
-		if (pairs < cells.length) even[binTwice[cells[pairs] + shift]]++;
-		for (let k = 0; k < bins; k++) counts[k] = even[k] + odd[k];
-		nullValues[m] = figure(counts);
-		if (nullValues[m] >= observed - ROUNDING) atLeast++;
-		sum += nullValues[m];
+	for (const value of nullValues) {
+		if (value >= observed - ROUNDING) atLeast++;
+		sum += value;
 	}
-	const isTested = shifts.length > 0 && Number.isFinite(observed);
+	const isTested = nullValues.length > 0 && Number.isFinite(observed);
 	return {
 		nullValues,
-		p: isTested ? (atLeast + 1) / (shifts.length + 1) : NaN,
-		nullMean: sum / shifts.length
+		p: isTested ? (atLeast + 1) / (nullValues.length + 1) : NaN,
+		nullMean: sum / nullValues.length
 	};
 }

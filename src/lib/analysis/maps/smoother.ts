@@ -2,10 +2,15 @@ import type { Arena } from '../arena/arena';
 import type { Bins } from '../arena/bins';
 import { metricOf } from '../arena/metric';
 import { CUT_SIGMAS, gaussianKernel } from './gaussian-kernel';
+import type { Separable } from './separable';
 import { gridSmoother, lineSmoother, type EdgeRule } from './smooth-line';
 
 /** Smooths one map: reads `from`, writes `to`; both have one value per bin and may be the same. */
-export type Smoother = (from: Float64Array, to: Float64Array) => void;
+export interface Smoother {
+	(from: Float64Array, to: Float64Array): void;
+	/** What it does in the compiled kernel's terms, where it can be said so. */
+	readonly separable?: Separable;
+}
 
 /**
  * Gaussian smoothing over the bins of an arena, cut at 4 σ.
@@ -17,8 +22,15 @@ export type Smoother = (from: Float64Array, to: Float64Array) => void;
  */
 export function smootherOf(arena: Arena, bins: Bins, sigmaCm: number, edge: EdgeRule): Smoother {
 	const weights = gaussianKernel(sigmaCm / bins.binCm);
+	if (arena.kind === 'tree' && weights.length > 1) return treeSmoother(arena, bins, sigmaCm);
+	const smooth = separableSmoother(bins, weights, edge);
+	if (edge !== 'zero' && !bins.isRing) return smooth;
+	const { binsX, binsY, isRing } = bins;
+	return Object.assign(smooth, { separable: { binsX, binsY, weights, isRing } });
+}
+
+function separableSmoother(bins: Bins, weights: Float64Array, edge: EdgeRule): Smoother {
 	if (weights.length === 1) return (from, to) => void to.set(from);
-	if (arena.kind === 'tree') return treeSmoother(arena, bins, sigmaCm);
 	if (bins.dimensions === 2) return gridSmoother(bins.binsX, bins.binsY, weights, edge);
 	const line = { count: bins.binsX, lines: 1, stride: 1, between: 0 };
 	return lineSmoother(line, weights, bins.isRing ? 'wrap' : edge);

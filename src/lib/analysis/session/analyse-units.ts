@@ -1,29 +1,29 @@
 import { coherence } from '../maps/coherence';
 import { fieldRule } from '../maps/fields';
-import { keptTime, spikeCells } from '../maps/kept-time';
 import { neighboursOf } from '../maps/neighbours';
 import { rawRates } from '../maps/raw-rates';
-import { drawShifts, shiftTest } from '../maps/shift-test';
-import { smoothedInformation } from '../maps/smoothed-information';
+import { shiftTest } from '../maps/shift-test';
 import { spikeCountsInto } from '../maps/spike-counts';
 import { unitMaps, type MapInput, type UnitMaps } from '../maps/unit-maps';
-import { seeded } from '../random/seeded';
 import { pearson } from '../statistics/pearson';
 import { describeMap } from './describe-map';
-import type { SessionParameters } from './parameters';
 import type { Ground, Path, UnitSpikes } from './prepared';
 import { figure, type MapResult, type UnitResult } from './result';
 import { halves, oddAndEven, usedWhere } from './sample-masks';
+import type { ShiftedUnit } from './shifted-units';
+
+const NOTHING = new Float64Array(0);
 
 /**
  * Maps of all units over the used samples, and every figure of the result that is of one unit.
- * @param onUnit told the number of units done
+ * @param shifted null figures of the shift test
+ * @param onUnit  told the number of units done
  */
 export function analyseUnits(
 	ground: Ground,
 	path: Path,
 	units: readonly UnitSpikes[],
-	parameters: SessionParameters,
+	shifted: ShiftedUnit,
 	onUnit: (done: number) => void
 ): { maps: UnitMaps; results: UnitResult[] } {
 	const { arena, bins } = ground;
@@ -43,9 +43,6 @@ export function analyseUnits(
 	const around = neighboursOf(arena, bins, true);
 	const rule = fieldRule(bins);
 	const counts = new Float64Array(bins.count);
-	const kept = keptTime(path.bin, path.standS, path.isUsed, path.medianIntervalS);
-	const shifts = drawShifts(kept, parameters.shuffles, seeded(parameters.seed, 'shift'));
-	const bits = smoothedInformation(maps.occupancyS, ground.smooth, ground.minOccupancyS);
 	const describe = (from: UnitMaps, isUsed: Uint8Array, u: number): MapResult => {
 		const used = units[u].samples.reduce((sum, i) => sum + (i >= 0 ? isUsed[i] : 0), 0);
 		return describeMap(bins, touching, rule, mapOf(from, u, bins.count), from.occupancyS, used);
@@ -54,22 +51,15 @@ export function analyseUnits(
 		const pooled = describe(maps, path.isUsed, u);
 		spikeCountsInto(counts, unit.samples, path.bin, path.isUsed);
 		const raw = rawRates(counts, maps.occupancyS, ground.minOccupancyS);
-		const cells = spikeCells(kept, unit.timesS, unit.samples, path.tS, path.isUsed);
-		const test = shiftTest(
-			kept,
-			cells,
-			pooled.informationBitsPerSpike === null ? new Int32Array(0) : shifts,
-			bins.count,
-			pooled.informationBitsPerSpike ?? NaN,
-			bits
-		);
+		const observed = pooled.informationBitsPerSpike;
+		const { p } = shiftTest(observed ?? NaN, observed === null ? NOTHING : shifted(u));
 		onUnit(u + 1);
 		return {
 			unit: unit.unit,
 			bundle: unit.bundle,
 			spikes: unit.timesS.length,
 			...pooled,
-			informationP: figure(test.p),
+			informationP: figure(p),
 			coherence: figure(coherence(raw, around)),
 			splitHalfR: figure(pearson(mapOf(first, u, bins.count), mapOf(second, u, bins.count))),
 			oddEvenR: figure(pearson(mapOf(odd, u, bins.count), mapOf(even, u, bins.count))),

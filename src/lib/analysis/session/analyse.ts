@@ -10,6 +10,7 @@ import { positionInputs } from './path-inputs';
 import { prepareGround, preparePath } from './prepare';
 import type { Ground, Path, UnitSpikes } from './prepared';
 import { figure, type OccupancyResult, type SessionResult } from './result';
+import { shiftedUnits } from './shifted-units';
 import { warnAboutDecoding, warnAboutUnits } from './warnings';
 
 /** With less used time than this nothing is said about place, s. */
@@ -69,7 +70,8 @@ export function analyseSession(
 	});
 	const hasMaps = path.usedS >= LEAST_USED_S;
 	const mapped = hasMaps ? ground : { ...ground, minOccupancyS: Infinity };
-	const { maps, results } = analyseUnits(mapped, path, units, parameters, (done) =>
+	const shifted = shiftedUnits(mapped, path, units, parameters);
+	const { maps, results } = analyseUnits(mapped, path, units, shifted, (done) =>
 		onProgress((0.6 * done) / units.length)
 	);
 	warnAboutUnits(warnings, path, results, hasMaps);

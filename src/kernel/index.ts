@@ -1,0 +1,1 @@
+export { rawShifts, smoothedShifts } from './shifts';
