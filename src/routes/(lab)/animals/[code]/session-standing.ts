@@ -21,7 +21,7 @@ export function sessionStanding({ files, analysis }: Recorded): Standing {
 			case 'running':
 				return { words: `running, ${Math.round(analysis.progress * 100)} %`, tone: 'plain' };
 			case 'queued':
-				return { words: 'waiting for its turn', tone: 'plain' };
+				return { words: 'waiting', tone: 'plain' };
 		}
 	}
 	const missing = (['position', 'spikes'] as const).filter((kind) => files[kind] !== 'taken-in');
