@@ -25,7 +25,7 @@ export function expectedLayers(
 	}
 	const usual = landmarks.find(({ layer }) => layer === 'ca1-pyramidal');
 	const ca1 = ca1Um === undefined ? usual : { fromUm: ca1Um, toUm: ca1Um };
-	return landmarks.flatMap(({ layer, fromUm, toUm, below }) => {
+	return landmarks.flatMap(({ layer, fromUm, toUm, below }): ExpectedLayer[] => {
 		if (layer === 'ca1-pyramidal')
 			return ca1 ? [{ layer, fromUm: ca1.fromUm, toUm: ca1.toUm }] : [];
 		if (below === 'surface') return [{ layer, fromUm, toUm }];
