@@ -81,6 +81,30 @@ describe('analyse', () => {
 		expect(out).toBe('');
 	});
 
+	it('reads units, waveforms and features and tells quality by them', async () => {
+		const units = await file('u.csv', 'unit,bundle,class,amplitude_uv,noise_uv\n11,T01,,,10\n');
+		const waveforms = await file(
+			'w.csv',
+			'unit,channel,sample,uv\n11,1,0,0\n11,1,1,-80\n11,1,2,0\n11,1,3,20\n'
+		);
+		const rows = Array.from({ length: 60 }, (_, k) => {
+			const unit = k % 3 === 0 ? '11' : '';
+			const shift = unit ? 0 : 50;
+			return `${k},T01,${unit},${shift + (k % 7)},${k % 5}`;
+		});
+		const features = await file('f.csv', `t_s,bundle,unit,f1,f2\n${rows.join('\n')}\n`);
+		const more = ['--units', units, '--waveforms', waveforms, '--waveform-hz', '4000'];
+		expect(await analyse([...inputs, ...more, '--features', features, '--json', '-'])).toBe(0);
+		const found = JSON.parse(out).units.find(({ unit }: { unit: string }) => unit === '11');
+		expect(found.quality).toMatchObject({
+			signalToNoise: 5,
+			troughToPeakMs: 0.5,
+			featuresUsed: 2,
+			deadFeatures: []
+		});
+		expect(found.quality.isolationDistance).toBeGreaterThan(20);
+	});
+
 	it.each([
 		[['--spikes', 's.csv', '--arena', 'straight:1'], '--position is missing'],
 		[[...inputs, '--arena', 'oval:3'], '--arena: "oval:3" is no arena'],
@@ -88,7 +112,8 @@ describe('analyse', () => {
 		[[...inputs, '--folds', 'ten'], '--folds: "ten" is not a number'],
 		[[...inputs, '--prior', 'flat'], '--prior: must be even or time-spent'],
 		[[...inputs, '--colour', 'red'], "Unknown option '--colour'"],
-		[[...inputs, '--waveforms', 'w.csv'], '--waveforms comes in a later version'],
+		[[...inputs, '--waveforms', 'w.csv'], '--waveforms and --waveform-hz go together'],
+		[[...inputs, '--waveforms', 'w.csv', '--waveform-hz', '0'], '--waveform-hz: must be above 0'],
 		[[...inputs, '--nwb', 'x.nwb'], '--nwb comes in a later version'],
 		[['--position', '/nowhere/p.csv', ...inputs.slice(2)], '/nowhere/p.csv: there is no such file']
 	])('%j is refused in one line', async (args, line) => {

@@ -6,9 +6,11 @@ import { ParameterError, sessionParameters } from '../lib/analysis/session/param
 import { withBundles } from '../lib/analysis/session/with-bundles';
 import {
 	readEpochs,
+	readFeatures,
 	readPosition,
 	readSpikes,
-	readUnits
+	readUnits,
+	readWaveforms
 } from '../lib/analysis/tables/read-session-tables';
 import { TableError } from '../lib/analysis/tables/table-error';
 import { ANALYSIS_VERSION } from '../lib/analysis/version';
@@ -28,12 +30,16 @@ async function analyse(options: AnalyseOptions): Promise<AnalysisResult> {
 		readPosition(chunks, { pxPerCm })
 	);
 	const spikes = await readHashed(options.spikes, (chunks) => readSpikes(chunks));
-	const rows = options.units ? (await readHashed(options.units, (c) => readUnits(c))).value : [];
-	const epochs = options.epochs
-		? (await readHashed(options.epochs, (c) => readEpochs(c))).value
-		: [];
+	const rows = await optional(options.units, readUnits);
+	const waveforms = await optional(options.waveforms, readWaveforms);
+	const features = await optional(options.features, readFeatures);
+	const epochs = await optional(options.epochs, readEpochs);
 	const units = withBundles(spikes.value.units, rows);
-	const { result } = analyseSession({ position: position.value, units, epochs }, parameters);
+	const evidence = { rows, waveforms, waveformHz: options.waveformHz ?? null, features };
+	const { result } = analyseSession(
+		{ position: position.value, units, epochs, evidence },
+		parameters
+	);
 	return analysisResult(
 		{ ...result, warnings: [...spikes.value.warnings, ...result.warnings] },
 		{
@@ -44,6 +50,14 @@ async function analyse(options: AnalyseOptions): Promise<AnalysisResult> {
 			elapsedS: (Date.now() - startedAt.getTime()) / 1000
 		}
 	);
+}
+
+/** The rows of a table that may be left out. */
+async function optional<Row>(
+	path: string | undefined,
+	read: (chunks: AsyncIterable<Uint8Array>) => Promise<Row[]>
+): Promise<Row[]> {
+	return path === undefined ? [] : (await readHashed(path, (chunks) => read(chunks))).value;
 }
 
 /** The line for a person, or null when the error is no fault of the input. */

@@ -7,6 +7,10 @@ export interface AnalyseOptions {
 	readonly position: string;
 	readonly spikes: string;
 	readonly units?: string;
+	readonly waveforms?: string;
+	/** Samples per second of the waveforms. */
+	readonly waveformHz?: number;
+	readonly features?: string;
 	readonly epochs?: string;
 	/** A path, or '-' for standard output; a readable table when absent. */
 	readonly json?: string;
@@ -25,13 +29,16 @@ const NUMBERS = {
 	seed: 'seed'
 } as const satisfies Record<string, keyof SessionParameters>;
 
-const NOT_YET = ['waveforms', 'waveform-hz', 'features', 'nwb'] as const;
+const NOT_YET = ['nwb'] as const;
 
 const TEXTS = [
 	'position',
 	'spikes',
 	'arena',
 	'units',
+	'waveforms',
+	'waveform-hz',
+	'features',
 	'epochs',
 	'json',
 	'px-per-cm',
@@ -55,7 +62,7 @@ export function readOptions(args: string[]): AnalyseOptions {
 	const early = NOT_YET.find((name) => given[name] !== undefined);
 	if (early) {
 		throw new Unusable(
-			`--${early} comes in a later version; this one reads --position, --spikes, --units and --epochs`
+			`--${early} comes in a later version; this one reads tables: --position, --spikes, --units, --waveforms, --features and --epochs`
 		);
 	}
 	const { position, spikes, arena, prior } = given;
@@ -72,13 +79,18 @@ export function readOptions(args: string[]): AnalyseOptions {
 	][]) {
 		if (given[name] !== undefined) numbers[field] = number(name, given[name]);
 	}
-	const pxPerCm =
-		given['px-per-cm'] === undefined ? undefined : number('px-per-cm', given['px-per-cm']);
-	if (pxPerCm !== undefined && !(pxPerCm > 0)) throw new Unusable('--px-per-cm: must be above 0');
+	const pxPerCm = positive('px-per-cm', given['px-per-cm']);
+	const waveformHz = positive('waveform-hz', given['waveform-hz']);
+	if ((given.waveforms === undefined) !== (waveformHz === undefined)) {
+		throw new Unusable('--waveforms and --waveform-hz go together');
+	}
 	return {
 		position,
 		spikes,
 		units: given.units,
+		waveforms: given.waveforms,
+		waveformHz,
+		features: given.features,
 		epochs: given.epochs,
 		json: given.json,
 		pxPerCm,
@@ -94,6 +106,13 @@ function parsed(args: string[]): Partial<Record<(typeof TEXTS)[number], string>>
 		if (error instanceof TypeError) throw new Unusable(error.message.split(/\.\s|\n/)[0]);
 		throw error;
 	}
+}
+
+function positive(name: string, text: string | undefined): number | undefined {
+	if (text === undefined) return undefined;
+	const value = number(name, text);
+	if (!(value > 0)) throw new Unusable(`--${name}: must be above 0`);
+	return value;
 }
 
 function number(name: string, text: string): number {

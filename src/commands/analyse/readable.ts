@@ -29,7 +29,7 @@ function units(count: number): string {
 function unitTable(result: AnalysisResult): string[] {
 	const head = ['unit', 'bundle', 'spikes', 'used', 'mean Hz', 'peak Hz', 'peak cm', 'bits/spike'];
 	const rows = [
-		[...head, 'p', 'half r', 'lap r', 'fields'],
+		[...head, 'p', 'half r', 'lap r', 'fields', 'contam.', 'isol. d', 'quality'],
 		...result.units.map((u) => [
 			u.unit,
 			u.bundle ?? '–',
@@ -47,7 +47,10 @@ function unitTable(result: AnalysisResult): string[] {
 			text(u.informationP, 3),
 			text(u.splitHalfR, 2),
 			text(u.oddEvenR, 2),
-			String(u.fields.length)
+			String(u.fields.length),
+			text(u.quality.contamination, 3),
+			text(u.quality.isolationDistance, 1),
+			u.quality.level === 'not-known' ? '–' : u.quality.level
 		])
 	];
 	const widths = rows[0].map((_, c) => Math.max(...rows.map((row) => row[c].length)));

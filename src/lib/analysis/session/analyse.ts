@@ -11,6 +11,7 @@ import { prepareGround, preparePath } from './prepare';
 import type { Ground, Path, UnitSpikes } from './prepared';
 import { figure, type OccupancyResult, type SessionResult } from './result';
 import { shiftedUnits } from './shifted-units';
+import { unitQuality } from './unit-quality';
 import { warnAboutDecoding, warnAboutUnits } from './warnings';
 
 /** With less used time than this nothing is said about place, s. */
@@ -74,6 +75,7 @@ export function analyseSession(
 	const { maps, results } = analyseUnits(mapped, path, units, shifted, (done) =>
 		onProgress((0.6 * done) / units.length)
 	);
+	const quality = unitQuality(input.units, ...recordedSpan(input), input.evidence);
 	warnAboutUnits(warnings, path, results, hasMaps);
 	const windows = sessionWindows(path, parameters.windowMs);
 	const session = hasMaps
@@ -104,7 +106,7 @@ export function analyseSession(
 				}
 			},
 			occupancy: occupancyResult(ground, maps.occupancyS),
-			units: results,
+			units: results.map((unit, u) => ({ ...unit, quality: quality[u] })),
 			decoding,
 			warnings
 		},
@@ -127,6 +129,16 @@ export function analyseSession(
 				}
 		}
 	};
+}
+
+/** First and last moment of which the session says anything, s. */
+function recordedSpan({ position: { tS }, units }: SessionInput): [number, number] {
+	const first = units.reduce((least, { timesS }) => Math.min(least, timesS[0] ?? least), tS[0]);
+	const last = units.reduce(
+		(most, { timesS }) => Math.max(most, timesS[timesS.length - 1] ?? most),
+		tS[tS.length - 1]
+	);
+	return [first, last];
 }
 
 function pathArrays({ tS, xCm, yCm, speedCmS, isUsed, laps }: Path) {

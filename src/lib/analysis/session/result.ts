@@ -1,3 +1,5 @@
+import type { PutativeType } from '../quality/putative-type';
+import type { QualityLevel } from '../quality/quality-class';
 import type { SessionParameters } from './parameters';
 
 /** A figure, or null when it cannot be computed; `warnings` then says why. */
@@ -29,6 +31,33 @@ export interface MapResult {
 	readonly ratesHzByBin: readonly Figure[];
 }
 
+/** How far a unit can be trusted as one cell; null where the figure's data were not handed in. */
+export interface QualityResult {
+	/** The worst of the figures that are known, by the thresholds of that name. */
+	readonly level: QualityLevel;
+	readonly thresholds: string;
+	/** Spike pairs closer than 2 ms. */
+	readonly refractoryViolations: number;
+	/** Share of inter-spike intervals under 2 ms. */
+	readonly violationShare: Figure;
+	/** Share of foreign spikes if they come from one other unit; null when half or more may be. */
+	readonly contamination: Figure;
+	/** Upper limit when no violation was seen; null otherwise, or when the session cannot tell. */
+	readonly contaminationLimit95: Figure;
+	/** Share of 5-minute bins with a spike. */
+	readonly presenceRatio: Figure;
+	readonly peakToPeakUv: Figure;
+	readonly signalToNoise: Figure;
+	readonly troughToPeakMs: Figure;
+	readonly isolationDistance: Figure;
+	readonly lRatio: Figure;
+	readonly featuresUsed: number;
+	/** Numbers of features left out because their wire was dead. */
+	readonly deadFeatures: readonly number[];
+	/** From the units table, else guessed from width and rate; null when neither is known. */
+	readonly type: PutativeType | null;
+}
+
 export interface UnitResult extends MapResult {
 	readonly unit: string;
 	readonly bundle: string | null;
@@ -41,6 +70,11 @@ export interface UnitResult extends MapResult {
 	readonly oddEvenR: Figure;
 	/** Straight tracks only. */
 	readonly directions: { readonly up: MapResult; readonly down: MapResult } | null;
+}
+
+/** A unit as the result tells it: its map, and how far it is one cell. */
+export interface SessionUnit extends UnitResult {
+	readonly quality: QualityResult;
 }
 
 export interface BundleWorth {
@@ -107,7 +141,7 @@ export interface SessionResult {
 	readonly parameters: SessionParameters;
 	readonly inputs: { readonly position: PositionInputs; readonly spikes: SpikeInputs };
 	readonly occupancy: OccupancyResult;
-	readonly units: readonly UnitResult[];
+	readonly units: readonly SessionUnit[];
 	readonly decoding: DecodingResult;
 	readonly warnings: readonly string[];
 }

@@ -64,6 +64,14 @@ const along = (axis: 'x' | 'y', isRequired: boolean): readonly FieldSpec[] => [
 	number(`${axis}_px`, axis, isRequired, { aliases: [`${axis}_pixel`, `${axis}_pixels`] })
 ];
 
+/** Other words for a bundle. */
+const GROUPS = ['tetrode', 'shank', 'electrode', 'group'];
+const UNIT = label('unit', true, false, ['unit_id', 'cell', 'cell_id', 'neuron']);
+const BUNDLE = label('bundle', false, true, GROUPS);
+
+/** Most dimensions of a feature space: f1 … f64. */
+export const MOST_FEATURES = 64;
+
 /** The columns of each table. */
 export const FIELDS: Readonly<Record<TableKind, readonly FieldSpec[]>> = {
 	position: [
@@ -75,14 +83,29 @@ export const FIELDS: Readonly<Record<TableKind, readonly FieldSpec[]>> = {
 	spikes: [
 		label('unit', true, false, ['unit_id', 'cell', 'cell_id', 'neuron', 'cluster', 'cluster_id']),
 		...TIMES,
-		label('bundle', false, true, ['tetrode', 'shank', 'electrode', 'group'])
+		BUNDLE
 	],
 	units: [
-		label('unit', true, false, ['unit_id', 'cell', 'cell_id', 'neuron']),
-		label('bundle', false, true, ['tetrode', 'shank', 'electrode', 'group']),
+		UNIT,
+		BUNDLE,
 		label('class', false, true, ['type', 'cell_type']),
 		number('amplitude_uv', 'amplitude_uv', false, { mayBeEmpty: true, guesses: ['amplitude'] }),
 		number('noise_uv', 'noise_uv', false, { mayBeEmpty: true, guesses: ['noise'] })
+	],
+	waveforms: [
+		UNIT,
+		BUNDLE,
+		label('channel', true, false, ['wire', 'site']),
+		number('sample', 'sample', true, { guesses: ['point'] }),
+		number('uv', 'uv', true, { aliases: ['mean_uv'], guesses: ['value', 'voltage'] })
+	],
+	features: [
+		...TIMES,
+		label('bundle', true, false, GROUPS),
+		label('unit', true, true, ['unit_id', 'cell', 'cell_id', 'neuron', 'cluster', 'cluster_id']),
+		...Array.from({ length: MOST_FEATURES }, (_, k) =>
+			number(`f${k + 1}`, `f${k + 1}`, k === 0, { aliases: [`feature_${k + 1}`] })
+		)
 	],
 	epochs: [
 		label('name', true, true, ['epoch', 'label']),

@@ -1,11 +1,13 @@
 import type { Epoch } from '../position/epochs';
 import { epochsOf } from './epochs-table';
+import { featuresOf, type BundleFeatures } from './features-table';
 import { isNpy, MAGIC_LENGTH } from './magic';
 import { positionsFromNpy, positionsOf, type PositionTable } from './position-table';
 import { spikesFromNpy, spikesOf, type SpikeTable } from './spike-table';
 import type { TableKind } from './table-error';
 import { TableReader, type TableOptions } from './table-reader';
 import { unitsOf, type UnitRow } from './units-table';
+import { waveformsOf, type MeanWaveform } from './waveforms-table';
 
 /** The bytes of a file, piece by piece; nothing but the piece at hand is kept as bytes. */
 export type Chunks = AsyncIterable<Uint8Array> | Iterable<Uint8Array>;
@@ -33,6 +35,22 @@ export async function readSpikes(chunks: Chunks, options: TableOptions = {}): Pr
 /** Reads what is known of units from a delimited table. */
 export async function readUnits(chunks: Chunks, options: TableOptions = {}): Promise<UnitRow[]> {
 	return unitsOf(await readTable('units', chunks, options));
+}
+
+/** Reads mean waveforms from a delimited table. */
+export async function readWaveforms(
+	chunks: Chunks,
+	options: TableOptions = {}
+): Promise<MeanWaveform[]> {
+	return waveformsOf(await readTable('waveforms', chunks, options));
+}
+
+/** Reads the features of every spike from a delimited table. */
+export async function readFeatures(
+	chunks: Chunks,
+	options: TableOptions = {}
+): Promise<BundleFeatures[]> {
+	return featuresOf(await readTable('features', chunks, options));
 }
 
 /** Reads epochs from a delimited table. */

@@ -1,5 +1,5 @@
 /** The tables a session is made of. */
-export type TableKind = 'position' | 'spikes' | 'units' | 'epochs';
+export type TableKind = 'position' | 'spikes' | 'units' | 'waveforms' | 'features' | 'epochs';
 
 /** Why a table was refused; stable, for programs. */
 export type TableCode =

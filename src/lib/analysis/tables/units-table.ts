@@ -1,3 +1,4 @@
+import { labelIn, numberIn } from './cells';
 import { TableError } from './table-error';
 import type { TableReader } from './table-reader';
 
@@ -18,18 +19,14 @@ export interface UnitRow {
  * @throws TableError a class that is none, or the same unit twice
  */
 export function unitsOf(reader: TableReader): UnitRow[] {
-	const text = (role: string, row: number): string => {
-		const column = reader.column(role);
-		return column?.ids && column.labels ? column.labels.labels[column.ids.values[row]] : '';
-	};
 	const number = (role: string, row: number): number | null => {
-		const value = reader.column(role)?.numbers?.values[row] ?? NaN;
+		const value = numberIn(reader, role, row);
 		return Number.isNaN(value) ? null : value;
 	};
 	const seen = new Set<string>();
 	return Array.from({ length: reader.rows }, (_, row) => {
-		const unit = text('unit', row);
-		const bundle = text('bundle', row) || null;
+		const unit = labelIn(reader, 'unit', row);
+		const bundle = labelIn(reader, 'bundle', row) || null;
 		const key = `${bundle ?? ''}\n${unit}`;
 		if (seen.has(key)) {
 			throw new TableError('units', 'duplicate', `unit ${unit} stands twice`, row + 2, 'unit');
@@ -38,7 +35,7 @@ export function unitsOf(reader: TableReader): UnitRow[] {
 		return {
 			unit,
 			bundle,
-			class: unitClass(text('class', row), row),
+			class: unitClass(labelIn(reader, 'class', row), row),
 			amplitudeUv: number('amplitude_uv', row),
 			noiseUv: number('noise_uv', row)
 		};
