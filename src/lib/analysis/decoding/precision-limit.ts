@@ -1,5 +1,6 @@
 import type { Bins } from '../arena/bins';
 import { quantileSorted } from '../statistics/quantile';
+import { fisherInformation } from './fisher-information';
 import type { RateModel } from './rate-model';
 
 /** Median of |z| for a standard normal error, and of the length of a plane one (√(2 ln 2)). */
@@ -43,13 +44,14 @@ function axisInformation(
 	const stepCm = ((before === place ? 0 : 1) + (after === place ? 0 : 1)) * bins.binCm;
 	if (stepCm === 0) return 0;
 	const places = model.bin.length;
-	let sum = 0;
+	const rates = new Float64Array(model.units);
+	const slopes = new Float64Array(model.units);
 	for (let u = 0; u < model.units; u++) {
 		const row = u * places;
-		const slope = (model.ratesHz[row + after] - model.ratesHz[row + before]) / stepCm;
-		sum += (slope * slope) / model.ratesHz[row + place];
+		rates[u] = model.ratesHz[row + place];
+		slopes[u] = (model.ratesHz[row + after] - model.ratesHz[row + before]) / stepCm;
 	}
-	return windowS * sum;
+	return fisherInformation(rates, slopes, windowS);
 }
 
 /**

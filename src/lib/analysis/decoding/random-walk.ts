@@ -1,7 +1,6 @@
 import type { Bins } from '../arena/bins';
 import type { Metric } from '../arena/metric';
-import { gaussianKernel } from '../maps/gaussian-kernel';
-import { gridSmoother } from '../maps/smooth-line';
+import { gridSteps, lineLogWeights } from './walk-weights';
 
 /** Carries a belief over places one step on: reads and writes one probability per place. */
 export type Walk = (belief: Float64Array) => void;
@@ -22,15 +21,12 @@ export function randomWalk(bins: Bins, bin: Int32Array, metric: Metric, sigmaCm:
 
 function lineWalk(bins: Bins, bin: Int32Array, metric: Metric, sigmaCm: number): Walk {
 	const places = bin.length;
-	const rows = new Float64Array(places * places);
+	const rows = lineLogWeights(bins, bin, metric, sigmaCm).map(Math.exp);
 	for (let from = 0; from < places; from++) {
+		const row = rows.subarray(from * places, (from + 1) * places);
 		let sum = 0;
-		for (let to = 0; to < places; to++) {
-			const d = metric(bins.centreXCm[bin[from]], NaN, bins.centreXCm[bin[to]], NaN) / sigmaCm;
-			rows[from * places + to] = Math.exp(-(d * d) / 2);
-			sum += rows[from * places + to];
-		}
-		for (let to = 0; to < places; to++) rows[from * places + to] /= sum;
+		for (const weight of row) sum += weight;
+		for (let to = 0; to < places; to++) row[to] /= sum;
 	}
 	const next = new Float64Array(places);
 	return (belief) => {
@@ -45,11 +41,7 @@ function lineWalk(bins: Bins, bin: Int32Array, metric: Metric, sigmaCm: number):
 }
 
 function gridWalk(bins: Bins, bin: Int32Array, sigmaCm: number): Walk {
-	const weights = gaussianKernel(sigmaCm / bins.binCm);
-	const spread = gridSmoother(bins.binsX, bins.binsY, weights, 'zero');
-	const rowSum = new Float64Array(bins.count);
-	for (const k of bin) rowSum[k] = 1;
-	spread(rowSum, rowSum);
+	const { spread, rowSum } = gridSteps(bins, bin, sigmaCm);
 	const grid = new Float64Array(bins.count);
 	return (belief) => {
 		grid.fill(0);

@@ -1,15 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import { referenceCase, worstDifference } from '../../../../tests/factories/reference';
-import { binsOf } from '../arena/bins';
-import { parseArena } from '../arena/parse-arena';
 import { seeded } from '../random/seeded';
 import { shuffled } from '../random/shuffled';
-import { drawGroups, drawnMeans, drawnMedians, percentileInterval } from './bootstrap';
 import { decodeWithoutBundles, everyWindow } from './bundle-worth';
 import { chanceMedian } from './chance';
 import { errorSummary } from './error-summary';
 import { foldsOf } from './folds';
-import { informationAt, precisionLimitCm } from './precision-limit';
 import { rateModel } from './rate-model';
 import { decodeSubsets, subsetSizes } from './unit-drop';
 import { windowCounts } from './window-counts';
@@ -38,36 +34,6 @@ describe('errorSummary', () => {
 	});
 });
 
-describe('bootstrap of laps', () => {
-	it('gives the medians and the interval of listed draws (numpy)', () => {
-		const { input, expected } = referenceCase<
-			{ absErrorCm: number[]; lap: number[]; drawnLapRanks: number[][] },
-			{ medians: number[]; ci95: [number, number] }
-		>('09_error_metrics.json', 'lap_bootstrap_percentile');
-		const laps = Math.max(...input.lap) + 1;
-		const draws = input.drawnLapRanks.map((ranks) => {
-			const copies = new Int32Array(laps);
-			for (const rank of ranks) copies[rank]++;
-			return copies;
-		});
-		const values = Float64Array.from(input.absErrorCm);
-		const medians = drawnMedians(values, Int32Array.from(input.lap), draws);
-		expect(worstDifference(medians, expected.medians)).toBeLessThan(1e-9);
-		expect(worstDifference(percentileInterval(medians, 0.95), expected.ci95)).toBeLessThan(1e-9);
-	});
-
-	it('draws as many groups as there are, and leaves NaN out of means', () => {
-		const draws = drawGroups(6, 40, seeded(9));
-		expect(draws.every((copies) => copies.reduce((a, b) => a + b, 0) === 6)).toBe(true);
-		const means = drawnMeans(Float64Array.of(1, NaN, 5), Int32Array.of(0, 0, 1), 2, [
-			Int32Array.of(2, 0),
-			Int32Array.of(1, 1),
-			Int32Array.of(0, 0)
-		]);
-		expect([...means]).toEqual([1, 3, NaN]);
-	});
-});
-
 describe('chanceMedian', () => {
 	it('comes near L(1 − 1/√2) for answers that know nothing (closed form)', () => {
 		const random = seeded(4);
@@ -79,37 +45,6 @@ describe('chanceMedian', () => {
 
 	it('is undefined for a handful of windows', () => {
 		expect(chanceMedian(19, () => 1)).toBeNaN();
-	});
-});
-
-describe('precision limit', () => {
-	/** Gaussian fields that tile a line: 15 Hz, σ 10 cm, 30 units on 200 cm. */
-	function tiling(binCm: number) {
-		const bins = binsOf(parseArena('straight:200'), binCm);
-		const rates = Array.from({ length: 30 }, (_, unit) =>
-			Array.from(
-				bins.centreXCm,
-				(x) => 15 * Math.exp(-(((x - ((unit + 0.5) * 200) / 30) / 10) ** 2) / 2)
-			)
-		);
-		const even = new Float64Array(bins.count).fill(1);
-		return { bins, model: rateModel(Float64Array.from(rates.flat()), even, () => true, 'even') };
-	}
-
-	it('is J = τ (N/L) A √(2π)/σ inside evenly tiled fields (closed form)', () => {
-		const { bins, model } = tiling(0.5);
-		if (!model) throw new Error('no model');
-		expect(informationAt(model, bins, 200, 0.25)).toBeCloseTo(0.14099784, 3);
-		const inside = Int32Array.from({ length: 101 }, (_, i) => 150 + i);
-		expect(precisionLimitCm(model, bins, inside, 0.25)).toBeCloseTo(1.79626, 2);
-	});
-
-	it('is undefined for maps without slope', () => {
-		const bins = binsOf(parseArena('straight:200'), 5);
-		const flat = new Float64Array(bins.count).fill(4);
-		const model = rateModel(flat, flat, () => true, 'even');
-		if (!model) throw new Error('no model');
-		expect(precisionLimitCm(model, bins, Int32Array.of(3, 4), 0.25)).toBeNaN();
 	});
 });
 
