@@ -10,9 +10,8 @@ import { logScore } from './log-score';
 describe('isInCredibleSet', () => {
 	it('grows by the most probable place first (hand-worked)', () => {
 		const p = Float64Array.of(0.5, 0.3, 0.15, 0.05);
-		const sizeAt = (level: number) =>
-			[0, 1, 2, 3].filter((k) => isInCredibleSet(p, k, level)).length;
-		expect([0.5, 0.8, 0.9, 0.96].map(sizeAt)).toEqual([1, 2, 3, 4]);
+		const setAt = (level: number) => [0, 1, 2, 3].filter((k) => isInCredibleSet(p, k, level));
+		expect([0.5, 0.8, 0.9, 0.96].map(setAt)).toEqual([[0], [0, 1], [0, 1, 2], [0, 1, 2, 3]]);
 	});
 
 	it('has the coverage and size that sorting gives (numpy)', () => {

@@ -11,7 +11,11 @@ export const LEAST_TEST_S = 60;
  * One list serves all units, so the order of the units cannot change a result.
  * @returns empty when there is under 60 s of kept time
  */
-export function drawShifts(kept: KeptTime, count: number, random: Random): Int32Array {
+export function drawShifts(
+	kept: Pick<KeptTime, 'lengthS' | 'cellS' | 'cells'>,
+	count: number,
+	random: Random
+): Int32Array {
 	if (!(kept.lengthS >= LEAST_TEST_S)) return new Int32Array(0);
 	const least = Math.ceil(LEAST_SHIFT_S / kept.cellS);
 	const most = kept.cells - least;
