@@ -40,7 +40,7 @@ export interface CleanPath {
  * @param stretch stretch of each sample, −1 for none
  * @param ring    the ring that `xCm` runs along, when it does; without it a seam looks like a jump
  * @throws RangeError a ring with two coordinates, or settings out of range
- * Inputs stay untouched. Cost: O(n · samples in 8 smoothing widths).
+ * Inputs stay untouched. Cost: O(n · samples in 4 smoothing widths).
  */
 export function cleanPath(
 	tS: Float64Array,

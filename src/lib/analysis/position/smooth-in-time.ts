@@ -18,7 +18,7 @@ const SLACK_S = 1e-9;
  * @param sigmaS  0 for no smoothing
  * @returns new array
  * @throws RangeError sigmaS negative or not finite
- * Cost: O(n · samples in 8 σ).
+ * Cost: O(n · samples in 4 σ).
  */
 export function smoothInTime(
 	tS: Float64Array,
@@ -32,20 +32,21 @@ export function smoothInTime(
 	const out = values.slice();
 	if (sigmaS === 0) return out;
 	const reachS = CUT_SIGMAS * sigmaS + SLACK_S;
+	const sums = new Float64Array(values.length);
+	const weights = new Float64Array(values.length).fill(1);
 	for (const { first, end } of unbrokenRuns(values, stretch)) {
-		let low = first;
 		for (let i = first; i < end; i++) {
-			while (tS[i] - tS[low] > reachS) low++;
-			let sum = 0;
-			let weights = 0;
-			for (let k = low; k < end && tS[k] - tS[i] <= reachS; k++) {
+			// A pair has one weight; each of the two leans towards the other by it.
+			for (let k = i + 1; k < end && tS[k] - tS[i] <= reachS; k++) {
 				const away = (tS[k] - tS[i]) / sigmaS;
 				const weight = Math.exp(-0.5 * away * away);
-				// Differences from the sample itself: a large offset costs no digits.
-				sum += weight * (values[k] - values[i]);
-				weights += weight;
+				const lean = weight * (values[k] - values[i]);
+				sums[i] += lean;
+				sums[k] -= lean;
+				weights[i] += weight;
+				weights[k] += weight;
 			}
-			out[i] = values[i] + sum / weights;
+			out[i] = values[i] + sums[i] / weights[i];
 		}
 	}
 	return out;
