@@ -41,6 +41,27 @@ const map = {
 	ratesHzByBin: figures
 };
 
+const qualitySchema = z
+	.object({
+		level: z.enum(['good', 'fair', 'poor', 'not-known']),
+		thresholds: z.string(),
+		refractoryViolations: z.int(),
+		violationShare: figure,
+		contamination: figure,
+		contaminationLimit95: figure,
+		presenceRatio: figure,
+		peakToPeakUv: figure,
+		signalToNoise: figure,
+		troughToPeakMs: figure,
+		isolationDistance: figure,
+		lRatio: figure,
+		featuresUsed: z.int(),
+		deadFeatures: z.array(z.int()).readonly(),
+		type: z.enum(['principal', 'interneuron', 'unclear']).nullable()
+	})
+	.optional()
+	.meta({ description: 'Absent from results made before version 0.2.' });
+
 const unitSchema = z.object({
 	unit: z.string(),
 	bundle: z.string().nullable(),
@@ -50,6 +71,7 @@ const unitSchema = z.object({
 	splitHalfR: figure,
 	oddEvenR: figure,
 	...map,
+	quality: qualitySchema,
 	directions: z.object({ up: z.object(map), down: z.object(map) }).nullable()
 });
 

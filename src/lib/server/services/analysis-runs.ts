@@ -72,15 +72,18 @@ async function inputOf(row: Analysis): Promise<AnalyseInput> {
 	if (!file.parsedSha256) throw new Error(`Positions ${file.id} were taken in without a track`);
 	const units = await Unit.findAll({
 		where: { sortingId: row.sortingId },
-		attributes: ['label', 'bundleLabel', 'spikes'],
+		attributes: ['label', 'bundleLabel', 'spikes', 'class', 'amplitudeUv', 'noiseUv'],
 		order: ['id']
 	});
 	return {
 		track: { sha256: file.parsedSha256, samples: Number(file.rowCount) },
-		units: units.map(({ label, bundleLabel, spikes }) => ({
-			unit: label,
-			bundle: bundleLabel,
-			spikes
+		units: units.map((unit) => ({
+			unit: unit.label,
+			bundle: unit.bundleLabel,
+			spikes: unit.spikes,
+			class: unit.class,
+			amplitudeUv: unit.amplitudeUv,
+			noiseUv: unit.noiseUv
 		})),
 		setup: row.setup,
 		parameters: row.parameters

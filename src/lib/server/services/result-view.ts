@@ -1,5 +1,11 @@
 import type { AnalysisResult } from '$lib/analysis/session/analysis-result';
-import type { DecodingResult, FieldResult, Figure, Place } from '$lib/analysis/session/result';
+import type {
+	DecodingResult,
+	FieldResult,
+	Figure,
+	Place,
+	QualityResult
+} from '$lib/analysis/session/result';
 
 /** A unit as the gallery and its table show it; its map comes with the arrays. */
 export interface UnitView {
@@ -17,6 +23,8 @@ export interface UnitView {
 	splitHalfR: Figure;
 	oddEvenR: Figure;
 	fields: FieldResult[];
+	/** Null in results made before quality was computed. */
+	quality: QualityResult | null;
 }
 
 /** What a session's page needs of a result: all figures, and none of the long lists. */
@@ -47,7 +55,8 @@ export function toResultView(result: AnalysisResult): ResultView {
 		informationP: unit.informationP,
 		splitHalfR: unit.splitHalfR,
 		oddEvenR: unit.oddEvenR,
-		fields: [...unit.fields]
+		fields: [...unit.fields],
+		quality: unit.quality ?? null
 	}));
 	const along = ({ spikesUsed, peakCm }: UnitView) =>
 		spikesUsed > 0 && peakCm ? peakCm[0] : Infinity;

@@ -3,6 +3,7 @@ import { ParameterError, type SessionParameters } from '$lib/analysis/session/pa
 import type { SessionResult } from '$lib/analysis/session/result';
 import { decodeSpikes } from '$lib/analysis/spikes/spike-blob';
 import { TableError } from '$lib/analysis/tables/table-error';
+import type { UnitRow } from '$lib/analysis/tables/units-table';
 import type { AnalysisSetup } from '$lib/schemas/data-state';
 import { putParts } from '$lib/server/storage/result-parts';
 import { readTrack } from '$lib/server/storage/position-track';
@@ -10,7 +11,8 @@ import { decodingPart, mapsPart, pathPart, spikesPart } from './result-arrays';
 
 export interface AnalyseInput {
 	track: { sha256: string; samples: number };
-	units: { unit: string; bundle: string | null; spikes: Uint8Array }[];
+	/** Spikes, and what a units table said of each. */
+	units: (UnitRow & { spikes: Uint8Array })[];
 	setup: AnalysisSetup;
 	parameters: SessionParameters;
 }
@@ -35,6 +37,7 @@ export async function analyseTask(
 					timesS: decodeSpikes(spikes)
 				})),
 				epochs: setup.epochs,
+				evidence: { rows: units, waveforms: [], waveformHz: null, features: [] },
 				...(setup.ends && { ends: setup.ends })
 			},
 			parameters,
