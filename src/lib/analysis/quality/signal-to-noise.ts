@@ -14,7 +14,7 @@ export interface SignalToNoise {
 
 /**
  * (max − min of the mean waveform on its best channel) / (2 σ of that channel's noise).
- * @param noiseSdUv σ of each channel, µV, from unit-free signal (see `noiseSd`)
+ * @param noiseSdUv σ of each channel, µV, from unit-free signal (see `robustSd`)
  * @returns ratio is NaN where σ is 0, NaN or the waveform is missing
  * @throws RangeError not one σ for each channel
  */

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { referenceCase, worstDifference } from '../../../../tests/factories/reference';
 import { bestChannel } from './best-channel';
-import { noiseSd } from './noise-sd';
+import { robustSd } from '../statistics/robust-sd';
 import { putativeType } from './putative-type';
 import { SIGNAL_TO_NOISE, signalToNoise } from './signal-to-noise';
 import { troughToPeakMs } from './trough-to-peak';
@@ -24,7 +24,7 @@ describe('signal to noise and width', () => {
 			}
 		>('12_unit_quality.json', 'snr_and_width');
 		const waveform = waveformOf(input.meanWaveformUv);
-		const sd = Float64Array.from(input.noiseUv, (row) => noiseSd(Float64Array.from(row)));
+		const sd = Float64Array.from(input.noiseUv, (row) => robustSd(Float64Array.from(row)));
 		expect(worstDifference(sd, expected.noiseSdMad)).toBeLessThan(1e-9);
 		const got = signalToNoise(waveform, sd);
 		expect(got).toMatchObject({ definition: SIGNAL_TO_NOISE, channel: expected.bestChannel });
@@ -58,10 +58,10 @@ describe('signal to noise and width', () => {
 
 	it('do not depend on an offset, and noise scales with its values', () => {
 		const values = Float64Array.of(3, 1, 4, 1, 5, 9, 2, 6);
-		const sd = noiseSd(values);
-		expect(noiseSd(values.map((v) => 100 - 2 * v))).toBeCloseTo(2 * sd, 12);
+		const sd = robustSd(values);
+		expect(robustSd(values.map((v) => 100 - 2 * v))).toBeCloseTo(2 * sd, 12);
 		expect([...values]).toEqual([3, 1, 4, 1, 5, 9, 2, 6]);
-		expect(noiseSd(new Float64Array(0))).toBeNaN();
+		expect(robustSd(new Float64Array(0))).toBeNaN();
 	});
 });
 
