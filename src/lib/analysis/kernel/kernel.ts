@@ -7,6 +7,10 @@ interface KernelExports {
 	readonly memory: WebAssembly.Memory;
 	readonly smoothedShifts: KernelFunction;
 	readonly rawShifts: KernelFunction;
+	readonly smoothFour: KernelFunction;
+	readonly tileRates: KernelFunction;
+	readonly tileBounds: KernelFunction;
+	readonly tiledDecode: KernelFunction;
 }
 
 const PAGE = 65_536;

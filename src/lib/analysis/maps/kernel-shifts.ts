@@ -20,7 +20,7 @@ export interface KernelShifts {
  * @returns null where there is no kernel, or more bins than it counts
  */
 export function kernelShifts(
-	kept: KeptTime,
+	kept: Pick<KeptTime, 'binTwice'>,
 	shifts: Int32Array,
 	bins: number,
 	most: number

@@ -11,7 +11,7 @@ export type ShiftedFigures = (cells: Int32Array) => Float64Array;
  * Cost: O(shifts · (spikes + figure)).
  */
 export function shiftedFigures(
-	kept: KeptTime,
+	kept: Pick<KeptTime, 'binTwice'>,
 	shifts: Int32Array,
 	bins: number,
 	figure: (counts: Float64Array) => number

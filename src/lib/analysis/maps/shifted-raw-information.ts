@@ -13,7 +13,7 @@ import { shiftedFigures, type ShiftedFigures } from './shifted-figures';
  * Cost: O(shifts · (spikes + bins)).
  */
 export function shiftedRawInformation(
-	kept: KeptTime,
+	kept: Pick<KeptTime, 'binTwice'>,
 	shifts: Int32Array,
 	occupancyS: Float64Array,
 	most: number

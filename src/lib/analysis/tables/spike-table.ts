@@ -109,7 +109,8 @@ function isSorted(times: Float64Array): boolean {
 	return true;
 }
 
-function byLabel(a: UnitInput, b: UnitInput): number {
+/** Order of units: by label, numbers by value, then by bundle. */
+export function byLabel(a: UnitInput, b: UnitInput): number {
 	const compare = (x: string, y: string) =>
 		x.localeCompare(y, 'en', { numeric: true, sensitivity: 'variant' });
 	return compare(a.unit, b.unit) || compare(a.bundle ?? '', b.bundle ?? '');

@@ -1,0 +1,34 @@
+import { fileURLToPath } from 'node:url';
+import { Piscina } from 'piscina';
+import type { BenchDay } from './simulate-day';
+import type { TaskInput, TaskName, TaskOutput } from './tasks';
+
+/** Threads that stay warm between repetitions. */
+export interface Crew {
+	readonly threads: number;
+	/** Runs a task as often as there are threads, each time with its own input. */
+	all<T extends TaskName>(
+		task: T,
+		input: (thread: number) => TaskInput<T>
+	): Promise<TaskOutput<T>[]>;
+	end(): Promise<void>;
+}
+
+/** Starts threads that all see one day. */
+export function startCrew(threads: number, day: BenchDay): Crew {
+	const pool = new Piscina({
+		filename: fileURLToPath(new URL('./thread.ts', import.meta.url)),
+		execArgv: ['--import', 'tsx'],
+		workerData: day,
+		minThreads: threads,
+		maxThreads: threads
+	});
+	return {
+		threads,
+		all: (task, input) =>
+			Promise.all(
+				Array.from({ length: threads }, (_, thread) => pool.run({ task, input: input(thread) }))
+			),
+		end: () => pool.destroy()
+	};
+}

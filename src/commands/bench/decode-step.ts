@@ -1,0 +1,84 @@
+import {
+	quickCounts,
+	quickDecode,
+	type QuickAnswer,
+	type QuickDay
+} from '../../lib/analysis/decoding/quick-decoder';
+import { median } from '../../lib/analysis/statistics/quantile';
+import type { Crew } from './crew';
+import { binsOfSamples, centresOf, share, smootherOfSize } from './ground';
+import type { BenchDay } from './simulate-day';
+
+const FOLDS = 10;
+
+function planned(day: BenchDay, windowS: number): QuickDay {
+	const { size, tS } = day;
+	const centre = centresOf(size);
+	return {
+		tS,
+		bin: binsOfSamples(day),
+		sampleS: 1 / size.hz,
+		spikes: { timeS: day.spikeS, unit: day.spikeUnit, units: size.units },
+		smooth: smootherOfSize(size),
+		centreXCm: centre.xCm,
+		centreYCm: centre.yCm,
+		// A whole number of windows may come out a rounding error short.
+		windows: Math.floor((size.minutes * 60) / windowS + 1e-9),
+		windowS,
+		folds: FOLDS,
+		leastHz: 1e-3
+	};
+}
+
+export interface CountFoldsInput {
+	windowS: number;
+	from: number;
+	to: number;
+	/** Gets the counts. */
+	counts: Int32Array;
+}
+
+/** Counts the spikes of some folds. */
+export function countFolds(day: BenchDay, { windowS, from, to, counts }: CountFoldsInput): void {
+	counts.set(quickCounts(planned(day, windowS), from, to));
+}
+
+export interface DecodeFoldsInput {
+	windowS: number;
+	from: number;
+	to: number;
+	counts: Int32Array[];
+}
+
+/** Decodes the windows of some folds from the counts of all threads. */
+export function decodeFolds(day: BenchDay, input: DecodeFoldsInput): QuickAnswer | null {
+	const all = new Int32Array(input.counts[0].length);
+	for (const part of input.counts) for (let k = 0; k < all.length; k++) all[k] += part[k];
+	return quickDecode(planned(day, input.windowS), all, input.from, input.to);
+}
+
+/** Decodes every window in ten folds; the error is that of the posterior mean. */
+export async function decodeStep(
+	crew: Crew,
+	day: BenchDay,
+	windowS: number
+): Promise<{ medianErrorCm: number }> {
+	const { binsX, binsY, units, hz } = day.size;
+	const cells = binsX * binsY * Math.ceil(units / 4) * 4;
+	const counts = Array.from(
+		{ length: crew.threads },
+		() => new Int32Array(new SharedArrayBuffer(4 * cells))
+	);
+	const folds = (thread: number) => ({ windowS, ...share(FOLDS, thread, crew.threads) });
+	await crew.all('count-folds', (thread) => ({ ...folds(thread), counts: counts[thread] }));
+	const parts = await crew.all('decode-folds', (thread) => ({ ...folds(thread), counts }));
+	const errors = parts.flatMap((part) => {
+		if (!part) return [];
+		return Array.from(part.meanXCm, (x, k) => {
+			const middleS = (part.firstWindow + k + 0.5) * windowS;
+			const i = Math.min(day.tS.length - 1, Math.floor(middleS * hz));
+			return Math.hypot(x - day.xCm[i], part.meanYCm[k] - day.yCm[i]);
+		});
+	});
+	return { medianErrorCm: median(errors) };
+}

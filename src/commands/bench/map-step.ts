@@ -1,0 +1,66 @@
+import {
+	halfCounts,
+	halfMaps,
+	type HalvedDay,
+	type HalfMaps
+} from '../../lib/analysis/maps/half-maps';
+import { median } from '../../lib/analysis/statistics/quantile';
+import type { Crew } from './crew';
+import { binsOfSamples, share, smootherOfSize } from './ground';
+import type { BenchDay } from './simulate-day';
+
+function halved(day: BenchDay): HalvedDay {
+	return {
+		tS: day.tS,
+		bin: binsOfSamples(day),
+		sampleS: 1 / day.size.hz,
+		spikes: { timeS: day.spikeS, unit: day.spikeUnit, units: day.size.units },
+		smooth: smootherOfSize(day.size),
+		blockS: 30,
+		leastHz: 1e-3
+	};
+}
+
+export interface CountMapsInput {
+	from: number;
+	to: number;
+	/** Gets the counts. */
+	counts: Int32Array;
+}
+
+/** Counts some of the spikes for maps of both halves. */
+export function countMaps(day: BenchDay, { from, to, counts }: CountMapsInput): void {
+	counts.set(halfCounts(halved(day), from, to));
+}
+
+export interface DrawMapsInput {
+	from: number;
+	to: number;
+	counts: Int32Array[];
+}
+
+/** Maps of some units from the counts of all threads. */
+export function drawMaps(day: BenchDay, { from, to, counts }: DrawMapsInput): HalfMaps | null {
+	const all = new Int32Array(counts[0].length);
+	for (const part of counts) for (let k = 0; k < all.length; k++) all[k] += part[k];
+	return halfMaps(halved(day), all, from, to);
+}
+
+/** Rate maps of all units, and how alike the maps of even and odd 30 s blocks are. */
+export async function mapStep(crew: Crew, day: BenchDay): Promise<{ splitHalfMedian: number }> {
+	const { binsX, binsY, units } = day.size;
+	const cells = 2 * binsX * binsY * Math.ceil(units / 4) * 4;
+	const counts = Array.from(
+		{ length: crew.threads },
+		() => new Int32Array(new SharedArrayBuffer(4 * cells))
+	);
+	await crew.all('count-maps', (thread) => ({
+		...share(day.spikeS.length, thread, crew.threads),
+		counts: counts[thread]
+	}));
+	const drawn = await crew.all('draw-maps', (thread) => ({
+		...share(units, thread, crew.threads, 4),
+		counts
+	}));
+	return { splitHalfMedian: median(drawn.flatMap((maps) => [...(maps?.splitHalfR ?? [])])) };
+}
