@@ -1,0 +1,37 @@
+import { describe, expect, it } from 'vitest';
+import {
+	joinOutcomes,
+	lawsOfLab,
+	outcomeOf,
+	simulatedLab
+} from '../../../../tests/factories/simulated-matching';
+import { seeded } from '../random/seeded';
+import { MATCH_RULE } from './match-rule';
+
+describe('following simulated units', () => {
+	// Five tetrodes over five days; tests/proof/unit-matching.ts does it at length.
+	const lab = simulatedLab(seeded(20330220), 5, 5);
+
+	it('finds four of five cells again and is right nineteen times in twenty, with starting laws', () => {
+		const { right, steps, toBeFound } = outcomeOf(lab, MATCH_RULE);
+		expect(toBeFound).toBeGreaterThan(60);
+		expect(right / steps).toBeGreaterThan(0.9);
+		expect(right / toBeFound).toBeGreaterThan(0.8);
+	});
+
+	it('is as often right as it says', () => {
+		const { right, steps, stepProbabilities } = joinOutcomes([outcomeOf(lab, MATCH_RULE)]);
+		const stated = stepProbabilities.reduce((sum, p) => sum + p, 0) / steps;
+		expect(Math.abs(stated - right / steps)).toBeLessThan(0.05);
+	});
+
+	it('does no worse with laws the lab fits to itself without labels', () => {
+		const { right, steps, toBeFound } = outcomeOf(lab, {
+			...MATCH_RULE,
+			laws: lawsOfLab(lab, MATCH_RULE),
+			calibration: { slope: 1, intercept: 0 }
+		});
+		expect(right / steps).toBeGreaterThan(0.9);
+		expect(right / toBeFound).toBeGreaterThan(0.8);
+	});
+});
