@@ -1,3 +1,5 @@
+import { countInterval } from '../trends/count-interval';
+
 /** What was counted of a unit. */
 export interface ViolationCount {
 	readonly spikes: number;
@@ -47,6 +49,15 @@ export function contamination(count: ViolationCount): Contamination {
 		oneUnit: q <= 0.5 ? (1 - Math.sqrt(1 - 2 * q)) / 2 : NaN,
 		manyUnits: q <= 1 ? 1 - Math.sqrt(1 - q) : NaN
 	};
+}
+
+/**
+ * The least contamination that as many violations can stand for: the count at the lower end of its
+ * exact 95 % interval (Garwood 1936). Two violations may be chance, or two bursts.
+ * @throws RangeError as `contamination`
+ */
+export function contaminationFloor(count: ViolationCount): Contamination {
+	return contamination({ ...count, violations: countInterval(count.violations).low });
 }
 
 /**

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { contamination, contaminationLimit } from './contamination';
+import { contamination, contaminationFloor, contaminationLimit } from './contamination';
 import { QUALITY_THRESHOLDS, qualityClass, type QualityFigures } from './quality-class';
 
 const count = (spikes: number, violations: number) => ({
@@ -11,7 +11,8 @@ const count = (spikes: number, violations: number) => ({
 });
 const contaminated = (spikes: number, violations: number) => ({
 	contamination: contamination(count(spikes, violations)),
-	contaminationLimit: contaminationLimit(count(spikes, violations))
+	contaminationLimit: contaminationLimit(count(spikes, violations)),
+	contaminationFloor: contaminationFloor(count(spikes, violations))
 });
 const unmeasured = { signalToNoise: NaN, isolationDistance: NaN, lRatio: NaN };
 const clean: QualityFigures = {
@@ -44,8 +45,11 @@ describe('qualityClass', () => {
 
 	it('accepts contamination to a tenth, warns to a fifth, and refuses what has no root', () => {
 		const level = (oneUnit: number) =>
-			qualityClass({ ...clean, contamination: { q: 0.3, oneUnit, manyUnits: 0 } }).criteria
-				.contamination;
+			qualityClass({
+				...clean,
+				contamination: { q: 0.3, oneUnit, manyUnits: 0 },
+				contaminationFloor: { q: 0.3, oneUnit, manyUnits: 0 }
+			}).criteria.contamination;
 		expect([0.1, 0.1001, 0.2, 0.2001, NaN].map(level)).toEqual([
 			'good',
 			'fair',
@@ -53,6 +57,17 @@ describe('qualityClass', () => {
 			'poor',
 			'poor'
 		]);
+	});
+
+	it('does not call a slow unit poor for two violations, which may be chance', () => {
+		// 1748 spikes in 1800 s: two pairs give q > ½, the lower end of their interval 0.24 pairs.
+		const slow = { ...clean, ...contaminated(1748, 2) };
+		expect(slow.contamination.oneUnit).toBeNaN();
+		expect(slow.contaminationFloor.oneUnit).toBeLessThan(0.05);
+		expect(qualityClass(slow).criteria.contamination).toBe('fair');
+		expect(qualityClass({ ...clean, ...contaminated(1748, 12) }).criteria.contamination).toBe(
+			'poor'
+		);
 	});
 
 	it('does not call a unit good that a short session without violations cannot vouch for', () => {

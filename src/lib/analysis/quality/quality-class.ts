@@ -10,6 +10,8 @@ export interface QualityFigures {
 	readonly contamination: Contamination;
 	/** See `contaminationLimit`; null when there were violations. */
 	readonly contaminationLimit: Contamination | null;
+	/** See `contaminationFloor`. */
+	readonly contaminationFloor: Contamination;
 	readonly presenceRatio: number;
 	readonly signalToNoise: number;
 	readonly isolationDistance: number;
@@ -51,7 +53,8 @@ export interface QualityClass {
 /**
  * Class of a unit: the worst of its figures that are known.
  *
- * Contamination is read by the form of one foreign unit, the larger of the two. Without a violation
+ * Contamination is read by the form of one foreign unit, the larger of the two. It makes a unit poor
+ * only when chance alone could not have given so many violations. Without a violation
  * its upper limit decides, and where that limit is too wide contamination is not known, never poor:
  * such a session cannot vouch for a unit. It is then fair at best, and not known unless its size or
  * its isolation was measured.
@@ -83,14 +86,20 @@ function worst(criteria: Readonly<Record<Criterion, QualityLevel>>): QualityLeve
 }
 
 function contaminationLevel(
-	{ contamination, contaminationLimit }: QualityFigures,
+	{ contamination, contaminationLimit, contaminationFloor }: QualityFigures,
 	bounds: readonly [number, number]
 ): QualityLevel {
 	const { q, oneUnit } = contaminationLimit ?? contamination;
 	if (Number.isNaN(q)) return 'not-known';
-	// Without a root at least half of the spikes are foreign, or may be.
-	const level = Number.isNaN(oneUnit) || oneUnit > bounds[1] ? 'poor' : upTo(oneUnit, bounds);
-	return contaminationLimit && level === 'poor' ? 'not-known' : level;
+	const level = levelOf(oneUnit, bounds);
+	if (level !== 'poor') return level;
+	if (contaminationLimit) return 'not-known';
+	return levelOf(contaminationFloor.oneUnit, bounds) === 'poor' ? 'poor' : 'fair';
+}
+
+/** Without a root at least half of the spikes are foreign, or may be. */
+function levelOf(oneUnit: number, bounds: readonly [number, number]): QualityLevel {
+	return Number.isNaN(oneUnit) ? 'poor' : upTo(oneUnit, bounds);
 }
 
 function presenceLevel(ratio: number, good: number): QualityLevel {

@@ -1,4 +1,9 @@
-import { contamination, contaminationLimit, type ViolationCount } from '../quality/contamination';
+import {
+	contamination,
+	contaminationFloor,
+	contaminationLimit,
+	type ViolationCount
+} from '../quality/contamination';
 import { isolation } from '../quality/isolation';
 import { MAZE_PRESENCE_BIN_S, presenceRatio } from '../quality/presence-ratio';
 import { putativeType, type PutativeType } from '../quality/putative-type';
@@ -56,6 +61,7 @@ export function unitQuality(
 			violationShare: violations.shareOfIntervals,
 			contamination: share,
 			contaminationLimit: limit,
+			contaminationFloor: contaminationFloor(count),
 			presenceRatio: presence,
 			signalToNoise: size.ratio,
 			isolationDistance: apart?.distance ?? NaN,
