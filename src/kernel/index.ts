@@ -1,4 +1,6 @@
+export { evidence } from './evidence';
 export { smoothFour } from './four-maps';
 export { rawShifts, smoothedShifts } from './shifts';
+export { smoothGrid } from './smooth-grid';
 export { tileBounds, tileRates } from './tile-rates';
 export { tiledDecode } from './tiled-decode';

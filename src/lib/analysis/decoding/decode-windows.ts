@@ -1,6 +1,6 @@
+import { blockEvidence, type BlockEvidence } from './block-evidence';
 import { isInCredibleSet } from './credible-set';
 import type { Fold } from './folds';
-import { addSpikeEvidence } from './log-likelihood';
 import { normalise } from './normalise';
 import { rowOf, type PosteriorStore } from './posterior-store';
 import type { RateModel } from './rate-model';
@@ -23,6 +23,7 @@ export interface Decoded {
  * @param trueBin bin of each window
  * @param out     filled for the windows of the fold
  * @param eachEvidence sees, per window, ln-likelihood (without prior) over the model's places
+ * @param evidenceOf  the same for all folds spares room
  * Cost: O(spiking units · places) per window.
  */
 export function decodeWindows(
@@ -33,22 +34,13 @@ export function decodeWindows(
 	trueBin: Int32Array,
 	out: Decoded,
 	store: PosteriorStore,
-	eachEvidence: (window: number, logLikelihood: Float64Array) => void
+	eachEvidence: (window: number, logLikelihood: Float64Array) => void,
+	evidenceOf: BlockEvidence = blockEvidence()
 ): void {
 	const places = model.bin.length;
-	const evidence = new Float64Array(places);
 	const logWeights = new Float64Array(places);
 	const posterior = new Float64Array(places);
-	for (let w = fold.from; w < fold.to; w++) {
-		for (let p = 0; p < places; p++) evidence[p] = -windowS * model.totalHz[p];
-		addSpikeEvidence(
-			evidence,
-			model,
-			counts.unit,
-			counts.spikes,
-			counts.first[w],
-			counts.first[w + 1]
-		);
+	evidenceOf(model, counts, windowS, fold.from, fold.to, (w, evidence) => {
 		for (let p = 0; p < places; p++) logWeights[p] = evidence[p] + model.logPrior[p];
 		const { best, logTotal } = normalise(logWeights, posterior);
 		out.bin[w] = model.bin[best];
@@ -62,5 +54,5 @@ export function decodeWindows(
 			}
 		}
 		eachEvidence(w, evidence);
-	}
+	});
 }

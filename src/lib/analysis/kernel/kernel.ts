@@ -7,7 +7,9 @@ interface KernelExports {
 	readonly memory: WebAssembly.Memory;
 	readonly smoothedShifts: KernelFunction;
 	readonly rawShifts: KernelFunction;
+	readonly evidence: KernelFunction;
 	readonly smoothFour: KernelFunction;
+	readonly smoothGrid: KernelFunction;
 	readonly tileRates: KernelFunction;
 	readonly tileBounds: KernelFunction;
 	readonly tiledDecode: KernelFunction;
@@ -26,7 +28,7 @@ export class Kernel {
 
 	constructor(readonly call: KernelExports) {}
 
-	/** Room for `bytes`, zero. @returns its offset */
+	/** Room for `bytes`, zero unless the kernel was cleared. @returns its offset */
 	take(bytes: number): number {
 		const at = this.used;
 		this.used = Math.ceil((at + bytes) / LINE) * LINE;
@@ -41,6 +43,11 @@ export class Kernel {
 		const from = new Uint8Array(numbers.buffer, numbers.byteOffset, numbers.byteLength);
 		new Uint8Array(this.call.memory.buffer).set(from, at);
 		return at;
+	}
+
+	/** Forgets all rooms; rooms taken next are not zero. */
+	clear(): void {
+		this.used = LINE;
 	}
 
 	float64(at: number, length: number): Float64Array {
@@ -64,6 +71,18 @@ export function newKernel(): Kernel | null {
 	if (!compiled) return null;
 	const { exports } = new WebAssembly.Instance(compiled);
 	return new Kernel(exports as unknown as KernelExports);
+}
+
+let scratch: Kernel | null | undefined;
+
+/**
+ * A kernel for work that is over when the function that asked for it returns: it comes cleared, and
+ * whatever it held is lost to the next who asks. Spares a memory for every small piece of work.
+ */
+export function scratchKernel(): Kernel | null {
+	scratch ??= newKernel();
+	scratch?.clear();
+	return scratch;
 }
 
 function compiledModule(): WebAssembly.Module | null {

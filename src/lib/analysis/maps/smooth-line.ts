@@ -1,3 +1,5 @@
+import { scratchKernel } from '../kernel/kernel';
+
 /**
  * What lies beyond the ends of a line of bins: nothing, its mirror image about the outer edge of the
  * last bin (… c b a | a b c …), or the other end.
@@ -81,8 +83,33 @@ export interface LineLayout {
 	readonly between: number;
 }
 
-/** Smooths the rows and then the columns of a row-major grid. */
+/** Smooths the rows and then the columns of a row-major grid; compiled where nothing lies beyond. */
 export function gridSmoother(
+	binsX: number,
+	binsY: number,
+	weights: Float64Array,
+	edge: EdgeRule
+): LineSmoother {
+	const plain = plainGridSmoother(binsX, binsY, weights, edge);
+	if (edge !== 'zero') return plain;
+	const reach = (weights.length - 1) / 2;
+	const half = weights.slice(reach);
+	const width = Math.ceil(binsX / 8) * 8;
+	return (from, to) => {
+		const kernel = scratchKernel();
+		if (!kernel) return plain(from, to);
+		const row = kernel.take(8 * (width + 2 * reach));
+		const rows = kernel.take(8 * width * (binsY + 2 * reach));
+		const line = kernel.take(8 * width);
+		const laid = kernel.keep(half);
+		const grid = kernel.keep(from);
+		kernel.call.smoothGrid(grid, binsX, binsY, laid, reach, row, rows, line);
+		to.set(kernel.float64(grid, binsX * binsY));
+	};
+}
+
+/** The same by `lineSmoother`; equal to the last bit. */
+export function plainGridSmoother(
 	binsX: number,
 	binsY: number,
 	weights: Float64Array,

@@ -1,3 +1,4 @@
+import { blockEvidence } from '../decoding/block-evidence';
 import { decodeWindows, type Decoded } from '../decoding/decode-windows';
 import { foldModels } from '../decoding/fold-models';
 import { foldsOf, type Fold } from '../decoding/folds';
@@ -74,13 +75,17 @@ export function decodeSession(
 	};
 	const memoryBin = new Int32Array(count).fill(-1);
 	const posterior = posteriorStore(count, ground.bins.count);
+	const evidenceOf = blockEvidence();
 	folds.forEach((fold, f) => {
 		const model = models[f];
 		if (!model) return;
 		const remember = memoryOf(ground, path, windows, fold, model);
-		decodeWindows(model, fold, counts, windowS, trueBin, decoded, posterior, (w, evidence) => {
+		const each = (w: number, evidence: Float64Array) => {
 			if (remember) memoryBin[w] = model.bin[remember(w, evidence)];
-		});
+		};
+		decodeWindows(
+			...([model, fold, counts, windowS, trueBin, decoded, posterior, each, evidenceOf] as const)
+		);
 		onFold(f + 1);
 	});
 	const { centreXCm, centreYCm } = ground.bins;
