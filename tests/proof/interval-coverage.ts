@@ -7,7 +7,7 @@ import { widenedInterval } from '../../src/lib/analysis/decoding/widened-interva
 import { seeded } from '../../src/lib/analysis/random/seeded';
 import { median } from '../../src/lib/analysis/statistics/quantile';
 import type { Report } from '../../src/commands/proof/report';
-import { decodedRun, trackCells, type DecodedRun } from '../factories/track-session';
+import { decodedRun, trackCells } from '../factories/track-session';
 
 export const about =
 	'95 % intervals of the median decoding error hold its true value in 93 to 97 % of sessions';
@@ -40,14 +40,19 @@ function tried(blocks: number, report: Report): number {
 	for (let k = 0; k < TRUTH; k++) for (const error of session(k).errorCm) truth.push(error);
 	const trueCm = median(truth);
 	const scores = {
-		plainBlocks: score(plain, byBlocks),
-		widenedBlocks: score(widened, byBlocks),
-		plainLaps: score(plain, byLaps),
-		widenedLaps: score(widened, byLaps)
+		plainBlocks: score(plain),
+		widenedBlocks: score(widened),
+		plainLaps: score(plain),
+		widenedLaps: score(widened)
 	};
 	for (let k = 0; k < TRIED; k++) {
 		const run = session(TRUTH + k);
-		for (const one of Object.values(scores)) one.take(run, k, trueCm);
+		const overBlocks = medians(run.errorCm, run.block, run.blocks, k);
+		scores.plainBlocks.take(overBlocks, run.blocks, trueCm);
+		scores.widenedBlocks.take(overBlocks, run.blocks, trueCm);
+		const overLaps = medians(run.errorCm, run.lap, run.laps, k);
+		scores.plainLaps.take(overLaps, run.laps, trueCm);
+		scores.widenedLaps.take(overLaps, run.laps, trueCm);
 	}
 	report.line(
 		`${blocks} blocks of ${BLOCK_S} s, 25 units on 180 cm: true median ${trueCm.toFixed(3)} cm (${TRUTH} sessions), ${TRIED} intervals of ${DRAWS} draws`
@@ -59,22 +64,24 @@ function tried(blocks: number, report: Report): number {
 	return scores.widenedBlocks.share();
 }
 
-const byBlocks = ({ block, blocks }: DecodedRun) => ({ group: block, groups: blocks });
-const byLaps = ({ lap, laps }: DecodedRun) => ({ group: lap, groups: laps });
+function medians(
+	errorCm: Float64Array,
+	group: Int32Array,
+	groups: number,
+	seed: number
+): Float64Array {
+	return drawnMedians(errorCm, group, drawGroups(groups, DRAWS, seeded(seed, 'interval')));
+}
 
-function score(
-	interval: Interval,
-	groupsOf: (run: DecodedRun) => { group: Int32Array; groups: number }
-) {
+/** Counts how often an interval holds the truth. */
+function score(interval: Interval) {
 	let held = 0;
 	let above = 0;
 	let widthCm = 0;
 	let taken = 0;
 	return {
-		take(run: DecodedRun, k: number, trueCm: number) {
-			const { group, groups } = groupsOf(run);
-			const draws = drawGroups(groups, DRAWS, seeded(k, 'interval'));
-			const [low, high] = interval(drawnMedians(run.errorCm, group, draws), groups);
+		take(drawn: Float64Array, groups: number, trueCm: number) {
+			const [low, high] = interval(drawn, groups);
 			if (low <= trueCm && trueCm <= high) held++;
 			else if (low > trueCm) above++;
 			widthCm += high - low;
