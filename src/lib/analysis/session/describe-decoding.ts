@@ -1,8 +1,9 @@
-import { drawGroups, drawnMedians, LEAST_GROUPS, percentileInterval } from '../decoding/bootstrap';
+import { drawGroups, drawnMedians, LEAST_GROUPS } from '../decoding/bootstrap';
 import { chanceMedian } from '../decoding/chance';
 import { errorSummary } from '../decoding/error-summary';
 import { precisionLimitCm } from '../decoding/precision-limit';
 import { rateModel } from '../decoding/rate-model';
+import { widenedInterval } from '../decoding/widened-interval';
 import type { UnitMaps } from '../maps/unit-maps';
 import { seeded } from '../random/seeded';
 import { mean } from '../statistics/mean';
@@ -61,7 +62,7 @@ export function describeDecoding(
 		unitsUsed: session.units.length,
 		windows: windows.startS.length,
 		medianErrorCm: figure(summary.medianCm),
-		medianErrorCi95Cm: interval(percentileInterval(medians, 0.95)),
+		medianErrorCi95Cm: interval(widenedInterval(medians, 0.95, path.groups.count)),
 		meanErrorCm: figure(summary.meanCm),
 		p95ErrorCm: figure(summary.p95Cm),
 		fractionWithin10Cm: figure(summary.fractionWithin10Cm),

@@ -1,6 +1,7 @@
-import { drawnMeans, percentileInterval } from '../decoding/bootstrap';
+import { drawnMeans } from '../decoding/bootstrap';
 import { decodeWithoutBundles, everyWindow } from '../decoding/bundle-worth';
 import { decodeSubsets, subsetSizes } from '../decoding/unit-drop';
+import { widenedInterval } from '../decoding/widened-interval';
 import type { Random } from '../random/seeded';
 import { shuffled } from '../random/shuffled';
 import { mean } from '../statistics/mean';
@@ -39,17 +40,18 @@ export function worthByBundle(
 		names.length,
 		looked
 	);
+	const groups = draws[0]?.length ?? 0;
 	const lookedGroup = Int32Array.from(looked, (w) => group[w]);
 	return names.map((bundle, b) => {
 		const bits = without.bits[b];
 		const errors = Float64Array.from(without.bin[b], (bin, k) => session.errorCm(bin, looked[k]));
-		const drawn = drawnMeans(bits, lookedGroup, draws[0]?.length ?? 0, draws);
+		const drawn = drawnMeans(bits, lookedGroup, groups, draws);
 		return {
 			bundle,
 			units: bundleOf.reduce((sum, k) => sum + (k === b ? 1 : 0), 0),
 			medianErrorWithoutCm: figure(median(errors)),
 			bits: figure(mean(bits.filter((value) => !Number.isNaN(value)))),
-			bitsCi90: interval(percentileInterval(drawn, 0.9))
+			bitsCi90: interval(widenedInterval(drawn, 0.9, groups))
 		};
 	});
 }
