@@ -4,3 +4,4 @@ export { rawShifts, smoothedShifts } from './shifts';
 export { smoothGrid } from './smooth-grid';
 export { tileBounds, tileRates } from './tile-rates';
 export { tiledDecode } from './tiled-decode';
+export { addLabel, parseRows } from './parse-rows';

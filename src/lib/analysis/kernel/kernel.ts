@@ -7,7 +7,9 @@ interface KernelExports {
 	readonly memory: WebAssembly.Memory;
 	readonly smoothedShifts: KernelFunction;
 	readonly rawShifts: KernelFunction;
+	readonly addLabel: KernelFunction;
 	readonly evidence: KernelFunction;
+	readonly parseRows: KernelFunction;
 	readonly smoothFour: KernelFunction;
 	readonly smoothGrid: KernelFunction;
 	readonly tileRates: KernelFunction;
@@ -48,6 +50,10 @@ export class Kernel {
 	/** Forgets all rooms; rooms taken next are not zero. */
 	clear(): void {
 		this.used = LINE;
+	}
+
+	bytes(at: number, length: number): Uint8Array {
+		return new Uint8Array(this.call.memory.buffer, at, length);
 	}
 
 	float64(at: number, length: number): Float64Array {

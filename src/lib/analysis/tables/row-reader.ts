@@ -3,6 +3,7 @@ import { splitLine, type Dialect } from './dialect';
 import type { FieldSpec } from './fields';
 import { MOST_LABELS } from './label-table';
 import { oddNumber } from './odd-number';
+import { plainRows, type PlainRows } from './plain-rows';
 import { TableError, type TableKind } from './table-error';
 
 const LF = 10;
@@ -16,6 +17,9 @@ const ZERO = 48;
 const EXACT = 2 ** 53;
 const TENS = Float64Array.from({ length: 23 }, (_, k) => Number(`1e${k}`));
 
+/** With more odd rows than this, and more than one in sixteen, the compiled reader is no help. */
+const MOST_ODD = 20_000;
+
 /**
  * Reads rows of a delimited table from bytes into columns. The loop over bytes is one function on
  * purpose: a call per cell would cost more than the cell.
@@ -26,24 +30,57 @@ export class RowReader {
 	/** Line of the file being read; the header is line 1. */
 	line = 1;
 
+	private plain: PlainRows | null;
+	/** Rows that the compiled reader left. */
+	private odd = 0;
+
 	/** @param plan the column of each cell, null for cells that are not read */
 	constructor(
 		private readonly table: TableKind,
 		private readonly header: readonly string[],
 		private readonly dialect: Dialect,
 		private readonly plan: readonly (Column | null)[]
-	) {}
+	) {
+		this.plain = plainRows(plan, dialect);
+	}
 
 	/** @param bytes whole rows, each ended by a line feed */
 	read(bytes: Uint8Array): void {
+		let at = 0;
+		while (at < bytes.length) {
+			if (!this.plain) {
+				this.readAny(bytes.subarray(at), Infinity);
+				return;
+			}
+			const piece = this.plain.lay(bytes, at);
+			for (let from = 0; from < piece;) {
+				const { rows, stop } = this.plain.read(from, piece, this.rows);
+				this.rows += rows;
+				this.line += rows;
+				from = stop;
+				if (from < piece) {
+					from += this.readAny(bytes.subarray(at + from, at + piece), 1);
+					this.odd++;
+				}
+			}
+			at += piece;
+			if (this.odd > MOST_ODD + this.rows / 16) this.plain = null;
+		}
+	}
+
+	/**
+	 * Reads up to `limit` lines, however they are written.
+	 * @returns bytes read
+	 */
+	private readAny(bytes: Uint8Array, limit: number): number {
 		const { plan } = this;
 		const last = plan.length - 1;
 		const delimiter = this.dialect.delimiter.charCodeAt(0);
 		const mark = this.dialect.decimal.charCodeAt(0);
-		const most = this.rows + Math.ceil(bytes.length / (2 * plan.length)) + 1;
+		const most = this.rows + Math.min(limit, Math.ceil(bytes.length / (2 * plan.length)) + 1);
 		for (const column of plan) (column?.numbers ?? column?.ids)?.reserve(most);
 		let at = 0;
-		while (at < bytes.length) {
+		for (let left = limit; left > 0 && at < bytes.length; left--) {
 			this.line++;
 			let blank = at;
 			while (bytes[blank] === SPACE || bytes[blank] === CR) blank++;
@@ -87,7 +124,7 @@ export class RowReader {
 						at = i;
 					} else {
 						const end = this.cellEnd(bytes, at, delimiter);
-						value = this.odd(bytes, at, end, c, column.spec);
+						value = this.oddValue(bytes, at, end, c, column.spec);
 						at = end;
 					}
 					const { factor, divisor } = column.spec;
@@ -107,6 +144,7 @@ export class RowReader {
 			if (bytes[at] === LF) at++;
 			this.rows++;
 		}
+		return at;
 	}
 
 	/** Index of the delimiter or line end after a cell; quotes hide what is inside them. */
@@ -130,7 +168,13 @@ export class RowReader {
 	}
 
 	/** Numbers the quick path leaves, and faults. */
-	private odd(bytes: Uint8Array, from: number, to: number, c: number, spec: FieldSpec): number {
+	private oddValue(
+		bytes: Uint8Array,
+		from: number,
+		to: number,
+		c: number,
+		spec: FieldSpec
+	): number {
 		const cell = this.text(bytes, from, to);
 		const value = oddNumber(cell, this.dialect.decimal);
 		if (typeof value === 'number') return value;

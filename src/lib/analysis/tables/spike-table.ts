@@ -79,18 +79,18 @@ function grouped(
 	bundleLabels: readonly string[]
 ): SpikeTable {
 	const perUnit = Math.max(1, bundleLabels.length);
-	const counts = new Int32Array(unitLabels.length * perUnit);
-	const group = (row: number) => unit[row] * perUnit + (bundle ? bundle[row] : 0);
-	for (let row = 0; row < timesS.length; row++) counts[group(row)]++;
-	const sorted = Array.from(counts, (count) => (count > 0 ? new Float64Array(count) : null));
-	const filled = new Int32Array(counts.length);
-	for (let row = 0; row < timesS.length; row++) {
-		const g = group(row);
-		const times = sorted[g];
-		if (times) times[filled[g]++] = timesS[row];
-	}
+	const group = bundle ? unit.slice(0, timesS.length) : unit;
+	if (bundle)
+		for (let row = 0; row < group.length; row++) group[row] = group[row] * perUnit + bundle[row];
+	const first = new Int32Array(unitLabels.length * perUnit + 1);
+	for (let row = 0; row < timesS.length; row++) first[group[row] + 1]++;
+	for (let g = 1; g < first.length; g++) first[g] += first[g - 1];
+	const next = first.slice();
+	const flat = new Float64Array(timesS.length);
+	for (let row = 0; row < timesS.length; row++) flat[next[group[row]]++] = timesS[row];
+	const sorted = Array.from(first.subarray(1), (end, g) => flat.slice(first[g], end));
 	const units = sorted.flatMap((times, g): UnitInput[] => {
-		if (!times) return [];
+		if (times.length === 0) return [];
 		if (!isSorted(times)) times.sort();
 		const name = bundle ? bundleLabels[g % perUnit] : '';
 		return [{ unit: unitLabels[Math.floor(g / perUnit)], bundle: name || null, timesS: times }];
