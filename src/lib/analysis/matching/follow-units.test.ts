@@ -126,7 +126,8 @@ describe('followUnits', () => {
 			{ survivalPerDay: 1 },
 			{ missedPerDay: -1 },
 			{ reachDays: 0 },
-			{ threshold: NaN }
+			{ threshold: NaN },
+			{ leastProbability: 0.9 }
 		];
 		for (const part of wrong) {
 			expect(() => followUnits(days, { ...MATCH_RULE, ...part })).toThrow(RangeError);

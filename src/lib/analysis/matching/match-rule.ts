@@ -8,8 +8,13 @@ export interface MatchRule {
 	readonly calibration: Calibration;
 	/** A pair must have at least this calibrated score: 0 favours finding every match, 2 true ones. */
 	readonly threshold: number;
-	/** Pairs less probable than this, rivals counted, are not joined and stay for a person to judge. */
+	/** Pairs less probable than this, rivals counted, are not joined. */
 	readonly leastProbability: number;
+	/**
+	 * Steps at least this probable stand without a person. Those between are proposals to look at: refusing
+	 * them here would break a lineage in two, and then both parts would seek the same cell.
+	 */
+	readonly sureProbability: number;
 	/** Share of units of a recorded day that are expected on the next. */
 	readonly survivalPerDay: number;
 	/** Share of units that are there on a recorded day but are not cut, or not joined. */
@@ -24,7 +29,7 @@ export interface MatchRule {
  * Fitted to simulated tetrodes with the starting laws (`npm run proof -- unit-matching`). No pairs of a
  * real recording stand behind it: a lab that has decided some fifty fits its own.
  */
-export const SIMULATED_CALIBRATION: Calibration = { slope: 0.84, intercept: -1.35 };
+export const SIMULATED_CALIBRATION: Calibration = { slope: 0.9, intercept: -1.6 };
 
 /** Where a lab begins. */
 export const MATCH_RULE: MatchRule = {
@@ -32,7 +37,8 @@ export const MATCH_RULE: MatchRule = {
 	laws: STARTING_LAWS,
 	calibration: SIMULATED_CALIBRATION,
 	threshold: 0,
-	leastProbability: 0.7,
+	leastProbability: 0.5,
+	sureProbability: 0.8,
 	survivalPerDay: 0.8,
 	missedPerDay: 0.1,
 	reachDays: 3,
@@ -49,6 +55,9 @@ export function demandMatchRule(rule: MatchRule): void {
 	}
 	if (!(Number.isInteger(rule.reachDays) && rule.reachDays >= 1)) {
 		throw new RangeError(`reach must be a whole number of days, got ${rule.reachDays}`);
+	}
+	if (!(rule.leastProbability >= 0 && rule.leastProbability <= rule.sureProbability)) {
+		throw new RangeError('the least probability must lie between 0 and the sure one');
 	}
 	if (!Number.isFinite(rule.threshold)) throw new RangeError('threshold must be a number');
 }
