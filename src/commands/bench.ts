@@ -3,7 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import process from 'node:process';
 import { median } from '../lib/analysis/statistics/quantile';
-import { startCrew, type Crew } from './bench/crew';
+import { crewOfOne, startCrew, type Crew } from './bench/crew';
 import { decodeStep } from './bench/decode-step';
 import { mapStep } from './bench/map-step';
 import { readBenchOptions, type StepName } from './bench/options';
@@ -13,9 +13,14 @@ import { SIZES } from './bench/sizes';
 import { tableStep } from './bench/table-step';
 import { writeTables } from './bench/write-tables';
 
+/** Unmeasured runs before the last unmeasured one. */
+const WARMING = 2;
+/** With fewer spikes than this only the shifts are worth a second thread. */
+const SHORT = 300_000;
+
 /**
  * `npm run bench`: seconds for each step of the numeric core on simulated days, one line of JSON a
- * step. Every step runs once unmeasured and then as often as asked for.
+ * step. Every step runs three times unmeasured and then as often as asked for.
  */
 export default async function bench(args: string[]): Promise<number> {
 	const { sizes, steps, repetitions, threads, seed } = readBenchOptions(args);
@@ -25,7 +30,10 @@ export default async function bench(args: string[]): Promise<number> {
 			const day = simulateDay(SIZES[size], seed);
 			const crew = startCrew(threads, day);
 			for (const step of steps) {
-				const run = await prepared(step, crew, day, folder);
+				const isShort = day.spikeS.length < SHORT && step !== 'shifts';
+				const workers = isShort ? crewOfOne(day) : crew;
+				const run = await prepared(step, workers, day, folder);
+				for (let k = 0; k < WARMING; k++) await run();
 				const told = await run();
 				const wall: number[] = [];
 				const cpu: number[] = [];
@@ -38,7 +46,9 @@ export default async function bench(args: string[]): Promise<number> {
 					cpu.push((user + system) / 1e6);
 				}
 				const timed = { medianS: median(wall), leastS: Math.min(...wall), cpuS: median(cpu) };
-				console.log(JSON.stringify({ step, size, threads, repetitions, ...timed, ...told }));
+				console.log(
+					JSON.stringify({ step, size, threads: workers.threads, repetitions, ...timed, ...told })
+				);
 			}
 			await crew.end();
 		}

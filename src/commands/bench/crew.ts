@@ -1,7 +1,7 @@
 import { fileURLToPath } from 'node:url';
 import { Piscina } from 'piscina';
 import type { BenchDay } from './simulate-day';
-import type { TaskInput, TaskName, TaskOutput } from './tasks';
+import { tasks, type TaskInput, type TaskName, type TaskOutput } from './tasks';
 
 /** Threads that stay warm between repetitions. */
 export interface Crew {
@@ -30,5 +30,17 @@ export function startCrew(threads: number, day: BenchDay): Crew {
 				Array.from({ length: threads }, (_, thread) => pool.run({ task, input: input(thread) }))
 			),
 		end: () => pool.destroy()
+	};
+}
+
+/** No threads: everything is done at once, here. For work that is shorter than handing it over. */
+export function crewOfOne(day: BenchDay): Crew {
+	return {
+		threads: 1,
+		all: async <T extends TaskName>(task: T, input: (thread: number) => TaskInput<T>) => {
+			const work = tasks[task] as (day: BenchDay, input: TaskInput<T>) => TaskOutput<T>;
+			return [work(day, input(0))];
+		},
+		end: () => Promise.resolve()
 	};
 }

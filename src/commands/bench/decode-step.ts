@@ -1,6 +1,7 @@
 import {
 	quickCounts,
 	quickDecode,
+	quickRoom,
 	type QuickAnswer,
 	type QuickDay
 } from '../../lib/analysis/decoding/quick-decoder';
@@ -40,7 +41,7 @@ export interface CountFoldsInput {
 
 /** Counts the spikes of some folds. */
 export function countFolds(day: BenchDay, { windowS, from, to, counts }: CountFoldsInput): void {
-	counts.set(quickCounts(planned(day, windowS), from, to));
+	quickCounts(planned(day, windowS), from, to, counts);
 }
 
 export interface DecodeFoldsInput {
@@ -52,9 +53,7 @@ export interface DecodeFoldsInput {
 
 /** Decodes the windows of some folds from the counts of all threads. */
 export function decodeFolds(day: BenchDay, input: DecodeFoldsInput): QuickAnswer | null {
-	const all = new Int32Array(input.counts[0].length);
-	for (const part of input.counts) for (let k = 0; k < all.length; k++) all[k] += part[k];
-	return quickDecode(planned(day, input.windowS), all, input.from, input.to);
+	return quickDecode(planned(day, input.windowS), input.counts, input.from, input.to);
 }
 
 /** Decodes every window in ten folds; the error is that of the posterior mean. */
@@ -63,22 +62,24 @@ export async function decodeStep(
 	day: BenchDay,
 	windowS: number
 ): Promise<{ medianErrorCm: number }> {
-	const { binsX, binsY, units, hz } = day.size;
-	const cells = binsX * binsY * Math.ceil(units / 4) * 4;
+	const room = quickRoom(planned(day, windowS));
 	const counts = Array.from(
 		{ length: crew.threads },
-		() => new Int32Array(new SharedArrayBuffer(4 * cells))
+		() => new Int32Array(new SharedArrayBuffer(4 * room))
 	);
 	const folds = (thread: number) => ({ windowS, ...share(FOLDS, thread, crew.threads) });
 	await crew.all('count-folds', (thread) => ({ ...folds(thread), counts: counts[thread] }));
 	const parts = await crew.all('decode-folds', (thread) => ({ ...folds(thread), counts }));
-	const errors = parts.flatMap((part) => {
-		if (!part) return [];
-		return Array.from(part.meanXCm, (x, k) => {
-			const middleS = (part.firstWindow + k + 0.5) * windowS;
-			const i = Math.min(day.tS.length - 1, Math.floor(middleS * hz));
-			return Math.hypot(x - day.xCm[i], part.meanYCm[k] - day.yCm[i]);
-		});
-	});
-	return { medianErrorCm: median(errors) };
+	const last = parts[parts.length - 1];
+	const errorCm = new Float64Array(last ? last.firstWindow + last.bin.length : 0);
+	for (const part of parts) {
+		if (!part) continue;
+		for (let k = 0; k < part.bin.length; k++) {
+			const window = part.firstWindow + k;
+			const middle = Math.floor((window + 0.5) * windowS * day.size.hz);
+			const i = Math.min(day.tS.length - 1, middle);
+			errorCm[window] = Math.hypot(part.meanXCm[k] - day.xCm[i], part.meanYCm[k] - day.yCm[i]);
+		}
+	}
+	return { medianErrorCm: median(errorCm) };
 }

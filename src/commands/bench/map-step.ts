@@ -1,6 +1,7 @@
 import {
 	halfCounts,
 	halfMaps,
+	halfRoom,
 	type HalvedDay,
 	type HalfMaps
 } from '../../lib/analysis/maps/half-maps';
@@ -30,7 +31,7 @@ export interface CountMapsInput {
 
 /** Counts some of the spikes for maps of both halves. */
 export function countMaps(day: BenchDay, { from, to, counts }: CountMapsInput): void {
-	counts.set(halfCounts(halved(day), from, to));
+	halfCounts(halved(day), from, to, counts);
 }
 
 export interface DrawMapsInput {
@@ -41,25 +42,22 @@ export interface DrawMapsInput {
 
 /** Maps of some units from the counts of all threads. */
 export function drawMaps(day: BenchDay, { from, to, counts }: DrawMapsInput): HalfMaps | null {
-	const all = new Int32Array(counts[0].length);
-	for (const part of counts) for (let k = 0; k < all.length; k++) all[k] += part[k];
-	return halfMaps(halved(day), all, from, to);
+	return halfMaps(halved(day), counts, from, to);
 }
 
 /** Rate maps of all units, and how alike the maps of even and odd 30 s blocks are. */
 export async function mapStep(crew: Crew, day: BenchDay): Promise<{ splitHalfMedian: number }> {
-	const { binsX, binsY, units } = day.size;
-	const cells = 2 * binsX * binsY * Math.ceil(units / 4) * 4;
+	const room = halfRoom(halved(day));
 	const counts = Array.from(
 		{ length: crew.threads },
-		() => new Int32Array(new SharedArrayBuffer(4 * cells))
+		() => new Int32Array(new SharedArrayBuffer(4 * room))
 	);
 	await crew.all('count-maps', (thread) => ({
 		...share(day.spikeS.length, thread, crew.threads),
 		counts: counts[thread]
 	}));
 	const drawn = await crew.all('draw-maps', (thread) => ({
-		...share(units, thread, crew.threads, 4),
+		...share(day.size.units, thread, crew.threads, 4),
 		counts
 	}));
 	return { splitHalfMedian: median(drawn.flatMap((maps) => [...(maps?.splitHalfR ?? [])])) };

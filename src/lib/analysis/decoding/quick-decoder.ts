@@ -34,17 +34,24 @@ export interface QuickAnswer {
 const BLOCK = 512;
 const NOWHERE = -1e30;
 
+/** How many numbers counts of [bin][unit] are. */
+export function quickRoom({ smooth, spikes }: QuickDay): number {
+	return smooth.separable.binsX * smooth.separable.binsY * unitRoom(spikes.units);
+}
+
 /**
- * Counts of [bin][unit] of some folds. The sum over all parts is what `quickDecode` wants, so the
- * counting can be shared among threads as well.
+ * Adds the spikes of some folds to counts of [bin][unit]. `quickDecode` wants the counts of all
+ * folds, in as many parts as one likes, so the counting can be shared among threads as well.
  */
-export function quickCounts(day: QuickDay, fromFold: number, toFold: number): Int32Array {
-	const room = unitRoom(day.spikes.units);
-	const { binsX, binsY } = day.smooth.separable;
-	const counts = new Int32Array(binsX * binsY * room);
+export function quickCounts(
+	day: QuickDay,
+	fromFold: number,
+	toFold: number,
+	counts: Int32Array
+): void {
+	const offset = offsets(day.bin, unitRoom(day.spikes.units));
 	const [from, to] = [fromFold, toFold].map((fold) => firstOfFold(day, day.spikes.timeS, fold));
-	addCounts(counts, day.tS, offsets(day.bin, room), day.spikes, from, to);
-	return counts;
+	addCounts(counts, day.tS, offset, day.spikes, from, to);
 }
 
 /**
@@ -52,13 +59,13 @@ export function quickCounts(day: QuickDay, fromFold: number, toFold: number): In
  * places that cannot matter: the best bin (flat prior over bins visited in training) and the mean
  * of the posterior, whose lost mass is below 1e-5. For a quick look at large days; the session's own
  * figures come from `decodeWindows`. Any part of the folds may be asked of any thread.
- * @param counts of all folds, [bin][unit]
+ * @param parts counts of [bin][unit] that add up to those of all folds
  * @returns null where there is no kernel
  * Cost: O(spikes) and, per window, spiking units · places that matter.
  */
 export function quickDecode(
 	day: QuickDay,
-	counts: Int32Array,
+	parts: readonly Int32Array[],
 	fromFold: number,
 	toFold: number
 ): QuickAnswer | null {
@@ -87,7 +94,7 @@ export function quickDecode(
 	const row = kernel.take(16 * (binsX + 2 * reach));
 	const rows = kernel.take(16 * binsX * (binsY + 2 * reachY));
 	const map = kernel.take(16 * bins);
-	const all = kernel.keep(counts);
+	const all = kernel.take(4 * units * bins);
 	const own = kernel.take(4 * units * bins);
 	const perSecond = kernel.take(4 * bins);
 	const slotOf = new Int32Array(bins);
@@ -114,6 +121,8 @@ export function quickDecode(
 	const best = kernel.take(4 * count);
 	const means = kernel.take(8 * count);
 
+	const allCounts = kernel.int32(all, units * bins);
+	for (const part of parts) for (let k = 0; k < part.length; k++) allCounts[k] += part[k];
 	const binOffset = offsets(bin, units);
 	const ownCounts = kernel.int32(own, units * bins);
 	const occupancyS = new Float64Array(bins);

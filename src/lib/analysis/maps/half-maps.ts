@@ -20,21 +20,24 @@ export interface HalvedDay {
 	readonly leastHz: number;
 }
 
+/** How many numbers counts of [half][bin][unit] are. */
+export function halfRoom(day: HalvedDay): number {
+	return 2 * binsOf(day) * unitRoom(day.spikes.units);
+}
+
 /**
- * Counts of [half][bin][unit] from some of the spikes. The sum over all parts is what `halfMaps`
- * wants, so the counting can be shared among threads.
+ * Adds some of the spikes to counts of [half][bin][unit]. `halfMaps` wants the counts of all spikes,
+ * in as many parts as one likes, so the counting can be shared among threads.
  * @param from, to spikes
  */
-export function halfCounts(day: HalvedDay, from: number, to: number): Int32Array {
+export function halfCounts(day: HalvedDay, from: number, to: number, counts: Int32Array): void {
 	const room = unitRoom(day.spikes.units);
 	const half = binsOf(day) * room;
-	const counts = new Int32Array(2 * half);
 	const offset = new Int32Array(day.bin.length);
 	for (let i = 0; i < offset.length; i++) {
 		offset[i] = day.bin[i] * room + (Math.floor(day.tS[i] / day.blockS) & 1) * half;
 	}
 	addCounts(counts, day.tS, offset, day.spikes, from, to);
-	return counts;
 }
 
 /** Maps of some units. */
@@ -47,13 +50,13 @@ export interface HalfMaps {
 
 /**
  * Smoothed maps of some units and how alike their halves are, in single precision.
- * @param counts of all spikes, [half][bin][unit]
+ * @param parts counts of [half][bin][unit] that add up to those of all spikes
  * @param fromUnit a multiple of four
  * @returns null where there is no kernel
  */
 export function halfMaps(
 	day: HalvedDay,
-	counts: Int32Array,
+	parts: readonly Int32Array[],
 	fromUnit: number,
 	toUnit: number
 ): HalfMaps | null {
@@ -67,18 +70,22 @@ export function halfMaps(
 	const half = kernel.keep(Float32Array.from(weights.subarray(reach)));
 	const row = kernel.take(16 * (binsX + 2 * reach));
 	const rows = kernel.take(16 * binsX * (binsY + 2 * reachY));
-	const laid = kernel.keep(counts);
+	const own = unitRoom(toUnit - fromUnit);
+	const laid = kernel.take(8 * bins * own);
 	const out = [kernel.take(16 * bins), kernel.take(16 * bins)];
 	const maps = out.map((at) => kernel.float32(at, 4 * bins));
+	sumInto(kernel.int32(laid, 2 * bins * own), parts, room, fromUnit, own);
 	const occupancyS = [new Float64Array(bins), new Float64Array(bins)];
 	for (let i = 0; i < day.bin.length; i++) {
 		occupancyS[Math.floor(day.tS[i] / day.blockS) & 1][day.bin[i]] += day.sampleS;
 	}
-	const [firstS, secondS] = occupancyS.map((seconds) => {
+	const smoothedS = occupancyS.map((seconds) => {
 		const smoothed = new Float64Array(bins);
 		day.smooth(seconds, smoothed);
 		return smoothed;
 	});
+	const [perFirst, perSecond] = smoothedS.map((seconds) => seconds.map((s) => 1 / s));
+	const perAll = smoothedS[0].map((s, k) => 1 / (s + smoothedS[1][k]));
 	const isInBoth = Uint8Array.from(occupancyS[0], (s, k) =>
 		s > 0 && occupancyS[1][k] > 0 ? 1 : 0
 	);
@@ -89,9 +96,9 @@ export function halfMaps(
 	const splitHalfR = new Float64Array(toUnit - fromUnit);
 	for (let unit = fromUnit; unit < toUnit; unit += 4) {
 		for (const [h, at] of out.entries()) {
-			const from = laid + 4 * (h * bins * room + unit);
+			const from = laid + 4 * (h * bins * own + unit - fromUnit);
 			kernel.call.smoothFour(
-				...[from, 0, 4 * room, binsX, binsY, half, reach, reachY, row, rows, at]
+				...[from, 0, 4 * own, binsX, binsY, half, reach, reachY, row, rows, at]
 			);
 		}
 		for (let lane = 0; lane < Math.min(4, toUnit - unit); lane++) {
@@ -100,17 +107,30 @@ export function halfMaps(
 			for (let k = 0; k < bins; k++) {
 				const a = maps[0][4 * k + lane];
 				const b = maps[1][4 * k + lane];
-				ratesHz[u * bins + k] = isVisited[k]
-					? Math.max(day.leastHz, (a + b) / (firstS[k] + secondS[k]))
-					: NaN;
+				ratesHz[u * bins + k] = isVisited[k] ? Math.max(day.leastHz, (a + b) * perAll[k]) : NaN;
 				if (!isInBoth[k]) continue;
-				first[n] = Math.max(day.leastHz, a / firstS[k]);
-				second[n++] = Math.max(day.leastHz, b / secondS[k]);
+				first[n] = Math.max(day.leastHz, a * perFirst[k]);
+				second[n++] = Math.max(day.leastHz, b * perSecond[k]);
 			}
 			splitHalfR[u] = pearson(first, second);
 		}
 	}
 	return { ratesHz, splitHalfR };
+}
+
+/** The counts of some units, all parts together: [row][unit]. */
+function sumInto(
+	out: Int32Array,
+	parts: readonly Int32Array[],
+	room: number,
+	fromUnit: number,
+	units: number
+): void {
+	for (const part of parts) {
+		for (let to = 0, from = fromUnit; to < out.length; to += units, from += room) {
+			for (let u = 0; u < units; u++) out[to + u] += part[from + u];
+		}
+	}
 }
 
 function binsOf({ smooth }: HalvedDay): number {

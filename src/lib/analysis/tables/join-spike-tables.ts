@@ -15,11 +15,13 @@ export function joinSpikeTables(parts: readonly SpikeTable[]): SpikeTable {
 	const units = [...times.values()].map(({ unit, bundle, parts: own }) => {
 		const timesS = new Float64Array(own.reduce((sum, { length }) => sum + length, 0));
 		let at = 0;
+		let isSorted = true;
 		for (const part of own) {
+			if (at > 0 && part[0] < timesS[at - 1]) isSorted = false;
 			timesS.set(part, at);
 			at += part.length;
 		}
-		if (timesS.some((time, k) => k > 0 && time < timesS[k - 1])) timesS.sort();
+		if (!isSorted) timesS.sort();
 		return { unit, bundle, timesS };
 	});
 	return {
