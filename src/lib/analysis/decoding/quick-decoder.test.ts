@@ -58,11 +58,11 @@ function dayOf(binsX: number, binsY: number, units: number): QuickDay {
 }
 
 /** The definition in double precision, place by place: ln p = Σ n ln f − τ Σ f. */
-function plainly(day: QuickDay): { bin: number[]; x: number[]; y: number[] } {
+function plainly(day: QuickDay): { logs: number[][]; x: number[]; y: number[] } {
 	const bins = day.centreXCm.length;
 	const { timeS, unit, units } = day.spikes;
 	const windowOf = (momentS: number) => Math.floor(momentS / day.windowS);
-	const out = { bin: [] as number[], x: [] as number[], y: [] as number[] };
+	const out = { logs: [] as number[][], x: [] as number[], y: [] as number[] };
 	for (let fold = 0; fold < day.folds; fold++) {
 		const [start, stop] = [foldStart(day, fold), foldStart(day, fold + 1)];
 		const isOwn = (momentS: number) => windowOf(momentS) >= start && windowOf(momentS) < stop;
@@ -92,7 +92,7 @@ function plainly(day: QuickDay): { bin: number[]; x: number[]; y: number[] } {
 			const total = weights.reduce((sum, weight) => sum + weight, 0);
 			const meanOf = (centre: Float64Array) =>
 				weights.reduce((sum, weight, b) => sum + weight * centre[b], 0) / total;
-			out.bin.push(logs.indexOf(top));
+			out.logs.push(logs);
 			out.x.push(meanOf(day.centreXCm));
 			out.y.push(meanOf(day.centreYCm));
 		}
@@ -123,7 +123,9 @@ describe('quickDecode', () => {
 		const day = dayOf(binsX, binsY, units);
 		const quick = decoded(day, [0, day.folds]);
 		const plain = plainly(day);
-		expect(quick.bin).toEqual(plain.bin);
+		// Single precision may take the second of two places that are equally good.
+		const short = quick.bin.map((bin, w) => Math.max(...plain.logs[w]) - plain.logs[w][bin]);
+		expect(Math.max(...short)).toBeLessThan(1e-5);
 		for (const axis of ['x', 'y'] as const) {
 			const apart = quick[axis].map((value, w) => Math.abs(value - plain[axis][w]));
 			expect(Math.max(...apart)).toBeLessThan(1e-3);
