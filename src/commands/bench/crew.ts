@@ -27,7 +27,10 @@ export function startCrew(threads: number, day: BenchDay): Crew {
 		threads,
 		all: (task, input) =>
 			Promise.all(
-				Array.from({ length: threads }, (_, thread) => pool.run({ task, input: input(thread) }))
+				Array.from({ length: threads }, async (_, thread) => {
+					const { output } = await pool.run({ task, input: input(thread) });
+					return output;
+				})
 			),
 		end: () => pool.destroy()
 	};

@@ -1,5 +1,5 @@
 import { workerData } from 'node:worker_threads';
-import { Piscina } from 'piscina';
+import { move, transferableSymbol, valueSymbol } from 'piscina';
 import type { BenchDay } from './simulate-day';
 import { tasks, type TaskInput, type TaskName, type TaskOutput } from './tasks';
 
@@ -14,9 +14,9 @@ const day: BenchDay = Array.isArray(workerData) ? workerData[1] : workerData;
 export default function run<T extends TaskName>({ task, input }: Order<T>): unknown {
 	const work = tasks[task] as (day: BenchDay, input: TaskInput<T>) => TaskOutput<T>;
 	const output = work(day, input);
-	return Piscina.move({
-		[Piscina.transferableSymbol]: [...buffersIn(output)],
-		[Piscina.valueSymbol]: output
+	return move({
+		[transferableSymbol]: [...buffersIn(output)],
+		[valueSymbol]: { output }
 	});
 }
 
