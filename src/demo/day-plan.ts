@@ -1,7 +1,8 @@
+import { drawNormal } from '$lib/analysis/random/normal-draw';
 import { seeded } from '$lib/analysis/random/seeded';
 import type { SharpWave } from '$lib/schemas/enumerations';
 import { PLACES, REFERENCE, TETRODES, type DemoAnimal, type DemoSession } from './animals';
-import { between, normal } from './simulate/normal';
+import { between } from './simulate/between';
 import type { TrueCell } from './simulate/cell';
 import { cellsOfDay } from './simulate/population';
 
@@ -30,7 +31,7 @@ export function planDay(animal: DemoAnimal, daysAgo: number): DayPlan {
 	const recorded = animal.recordedDays - 1 - daysAgo;
 	const isRecorded = recorded >= 0;
 	return {
-		weight: { time: clock(8 * 60 + 10), netG: netWeightG(animal, dayNumber, normal(random)) },
+		weight: { time: clock(8 * 60 + 10), netG: netWeightG(animal, dayNumber, drawNormal(random)) },
 		turns: turnsOf(animal, dayNumber, daysAgo),
 		landmarks: isRecorded || dayNumber < 1 ? [] : landmarksOf(animal, dayNumber),
 		tallies: isRecorded ? talliesOf(animal, recorded) : [],

@@ -1,4 +1,4 @@
-import { between } from '../../src/demo/simulate/normal';
+import { between } from '../../src/demo/simulate/between';
 import type { TrueCell } from '../../src/demo/simulate/cell';
 import { runStraight } from '../../src/demo/simulate/run-straight';
 import { spikeTrain } from '../../src/demo/simulate/spike-train';

@@ -1,6 +1,7 @@
+import { drawNormal } from '$lib/analysis/random/normal-draw';
 import { seeded, type Random } from '$lib/analysis/random/seeded';
 import type { TrueCell, TrueField } from './cell';
-import { between, normal } from './normal';
+import { between } from './between';
 
 /** How a bundle's cells come and go. Days count from the first recorded one. */
 export interface Story {
@@ -100,8 +101,8 @@ function drifted(
 ): TrueField {
 	let { xCm, yCm } = field;
 	for (let step = 0; step < day; step++) {
-		xCm += driftCm * normal(random);
-		if (yCm !== null) yCm += driftCm * normal(random);
+		xCm += driftCm * drawNormal(random);
+		if (yCm !== null) yCm += driftCm * drawNormal(random);
 	}
 	const within = (cm: number, lengthCm: number) => Math.min(Math.max(cm, 0), lengthCm);
 	return {

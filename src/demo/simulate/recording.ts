@@ -1,6 +1,6 @@
+import { drawNormal } from '$lib/analysis/random/normal-draw';
 import { seeded } from '$lib/analysis/random/seeded';
 import type { TrueCell } from './cell';
-import { normal } from './normal';
 import type { TruePath } from './path';
 import { spikeTrain } from './spike-train';
 
@@ -43,8 +43,8 @@ function positionCsv(path: TruePath, seed: number, origin: { xCm: number; yCm: n
 	const random = seeded(seed, 'tracker');
 	const rows = ['t_s,x_cm,y_cm'];
 	for (let i = 0; i < path.tS.length; i++) {
-		const x = path.xCm[i] + origin.xCm + TRACKER_CM * normal(random);
-		const y = path.yCm[i] + origin.yCm + TRACKER_CM * normal(random);
+		const x = path.xCm[i] + origin.xCm + TRACKER_CM * drawNormal(random);
+		const y = path.yCm[i] + origin.yCm + TRACKER_CM * drawNormal(random);
 		rows.push(`${path.tS[i].toFixed(4)},${x.toFixed(2)},${y.toFixed(2)}`);
 	}
 	return rows.join('\n') + '\n';

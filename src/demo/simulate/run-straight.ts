@@ -1,5 +1,6 @@
+import { drawNormal } from '$lib/analysis/random/normal-draw';
 import type { Random } from '$lib/analysis/random/seeded';
-import { between, normal } from './normal';
+import { between } from './between';
 import { SAMPLE_HZ, emptyPath, type TruePath } from './path';
 
 /** How close to an end the animal turns, cm. */
@@ -19,8 +20,8 @@ export function runStraight(lengthCm: number, durationS: number, random: Random)
 	let wander = 0;
 	for (let i = 0; i < path.tS.length; i++) {
 		// Speed and the way across wander with time constants of about a second.
-		wander += (-wander + 5 * normal(random)) / SAMPLE_HZ;
-		y += (-y / 2 + 2 * normal(random)) / Math.sqrt(SAMPLE_HZ) / 4;
+		wander += (-wander + 5 * drawNormal(random)) / SAMPLE_HZ;
+		y += (-y / 2 + 2 * drawNormal(random)) / Math.sqrt(SAMPLE_HZ) / 4;
 		if (waitS > 0) {
 			waitS -= 1 / SAMPLE_HZ;
 		} else {

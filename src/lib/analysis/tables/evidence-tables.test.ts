@@ -1,18 +1,8 @@
 import { describe, expect, it } from 'vitest';
+import { tableRefusal } from '../../../../tests/factories/table-refusal';
 import { readFeatures, readWaveforms } from './read-session-tables';
-import { TableError } from './table-error';
 
 const bytes = (text: string) => [new TextEncoder().encode(text)];
-
-async function refusal(reading: Promise<unknown>): Promise<TableError> {
-	try {
-		await reading;
-	} catch (error) {
-		if (error instanceof TableError) return error;
-		throw error;
-	}
-	throw new Error('the table was not refused');
-}
 
 describe('a table of mean waveforms', () => {
 	it('is read whatever the order of its rows, channels in natural order', async () => {
@@ -39,7 +29,7 @@ describe('a table of mean waveforms', () => {
 		['7,1,0.5,1\n', 'not-a-number', 'sample 0.5 is no whole number'],
 		['7,1,-1,1\n', 'not-a-number', 'sample -1 is no whole number']
 	])('is refused: %j', async (rows, code, reason) => {
-		const error = await refusal(readWaveforms(bytes(`unit,channel,sample,uv\n${rows}`)));
+		const error = await tableRefusal(readWaveforms(bytes(`unit,channel,sample,uv\n${rows}`)));
 		expect(error.code).toBe(code);
 		expect(error.reason).toContain(reason);
 		expect(error.table).toBe('waveforms');
@@ -65,7 +55,7 @@ describe('a table of features', () => {
 		[`${head}0.1,,3,1,2\n`, 'missing-value', 'the cell is empty'],
 		[`${head}0.1,T01,3,1,x\n`, 'not-a-number', '"x" is not a number']
 	])('is refused: %j', async (text, code, reason) => {
-		const error = await refusal(readFeatures(bytes(text)));
+		const error = await tableRefusal(readFeatures(bytes(text)));
 		expect(error.code).toBe(code);
 		expect(error.reason).toContain(reason);
 	});

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import { tableRefusal } from '../../../../tests/factories/table-refusal';
 import { seeded } from '../random/seeded';
 import { readEpochs, readPosition, readSpikes, readUnits } from './read-session-tables';
-import { TableError } from './table-error';
 
 const bytes = (text: string) => new TextEncoder().encode(text);
 /** The text in pieces of a few bytes, so that every boundary is met. */
@@ -10,16 +10,6 @@ function pieces(text: string, size = text.length): Uint8Array[] {
 	return Array.from({ length: Math.ceil(all.length / size) }, (_, k) =>
 		all.slice(k * size, (k + 1) * size)
 	);
-}
-
-async function refusal(reading: Promise<unknown>): Promise<TableError> {
-	try {
-		await reading;
-	} catch (error) {
-		if (error instanceof TableError) return error;
-		throw error;
-	}
-	throw new Error('the table was not refused');
 }
 
 describe('a table of positions', () => {
@@ -58,7 +48,7 @@ describe('a table of positions', () => {
 		expect([mm.tS[0], mm.xCm[0], mm.yCm?.[0]]).toEqual([1.5, 12.3, 4.5]);
 		const px = await readPosition(pieces('t_s,x_px,y_px\n0,180,720\n'), { pxPerCm: 4 });
 		expect([px.xCm[0], px.yCm?.[0]]).toEqual([45, 180]);
-		const error = await refusal(readPosition(pieces('t_s,x_px,y_px\n0,180,720\n')));
+		const error = await tableRefusal(readPosition(pieces('t_s,x_px,y_px\n0,180,720\n')));
 		expect(error).toMatchObject({ code: 'header', column: 'x_px' });
 		expect(error.reason).toContain('pixels per cm');
 	});
@@ -67,15 +57,15 @@ describe('a table of positions', () => {
 		const text = 'time,px,skip\n0,1,x\n1,2,y\n';
 		const mapping = { time: 't_s', px: 'x_cm', skip: '' };
 		expect([...(await readPosition(pieces(text), { mapping })).xCm]).toEqual([1, 2]);
-		expect(await refusal(readPosition(pieces('time,x\n0,1\n')))).toMatchObject({
+		expect(await tableRefusal(readPosition(pieces('time,x\n0,1\n')))).toMatchObject({
 			code: 'header',
 			row: 1,
 			column: 't_s'
 		});
 		const twice = readPosition(pieces(text), { mapping: { time: 't_s', px: 't_ms' } });
-		expect(await refusal(twice)).toMatchObject({ code: 'mapping', column: 'px' });
+		expect(await tableRefusal(twice)).toMatchObject({ code: 'mapping', column: 'px' });
 		const absent = readPosition(pieces(text), { mapping: { t: 't_s' } });
-		expect(await refusal(absent)).toMatchObject({ code: 'mapping', column: 't' });
+		expect(await tableRefusal(absent)).toMatchObject({ code: 'mapping', column: 't' });
 	});
 
 	it.each([
@@ -94,7 +84,7 @@ describe('a table of positions', () => {
 		['t_s;x_cm\n0,1;1.234,5\n', 'not-a-number', 2, 'x_cm'],
 		['t_s,x_cm\n0,1\n0.1,30000000\n', 'absurd-position', 3, 'x_cm']
 	])('%j is refused: %s', async (text, code, row, column) => {
-		expect(await refusal(readPosition(pieces(text, 5)))).toMatchObject({
+		expect(await tableRefusal(readPosition(pieces(text, 5)))).toMatchObject({
 			table: 'position',
 			code,
 			row,
@@ -103,7 +93,7 @@ describe('a table of positions', () => {
 	});
 
 	it('says how decimal commas can be told apart', async () => {
-		const error = await refusal(readPosition(pieces('t_s,x_cm\n0,0,1,5\n')));
+		const error = await tableRefusal(readPosition(pieces('t_s,x_cm\n0,0,1,5\n')));
 		expect(error.reason).toContain('semicolons');
 	});
 
@@ -114,7 +104,7 @@ describe('a table of positions', () => {
 		['UTF-16', [0xff, 0xfe, 0x74, 0, 0x5f, 0, 0x73, 0], 'UTF-8'],
 		['other bytes', [0x74, 0, 1, 2, 3, 4, 5, 6], 'binary']
 	])('%s under the name of a table is refused', async (_, head, part) => {
-		const error = await refusal(readPosition([Uint8Array.from(head)]));
+		const error = await tableRefusal(readPosition([Uint8Array.from(head)]));
 		expect(error).toMatchObject({ code: 'not-a-table' });
 		expect(error.reason).toContain(part);
 	});
@@ -124,7 +114,7 @@ describe('a table of positions', () => {
 			yield bytes('t_s,x_cm\n' + '1,2\n'.repeat(20_000));
 			for (;;) yield new Uint8Array(65_536).fill(49);
 		}
-		expect(await refusal(readPosition(endless()))).toMatchObject({ code: 'not-a-table' });
+		expect(await tableRefusal(readPosition(endless()))).toMatchObject({ code: 'not-a-table' });
 	});
 });
 
@@ -148,13 +138,13 @@ describe('a table of spikes', () => {
 	});
 
 	it('is refused with an empty label or with times where labels belong', async () => {
-		expect(await refusal(readSpikes(pieces('unit,t_s\n,1\n')))).toMatchObject({
+		expect(await tableRefusal(readSpikes(pieces('unit,t_s\n,1\n')))).toMatchObject({
 			code: 'missing-value',
 			row: 2,
 			column: 'unit'
 		});
 		const times = Array.from({ length: 20_001 }, (_, i) => `${i / 7},1\n`).join('');
-		expect(await refusal(readSpikes(pieces(`unit,t_s\n${times}`)))).toMatchObject({
+		expect(await tableRefusal(readSpikes(pieces(`unit,t_s\n${times}`)))).toMatchObject({
 			code: 'too-large',
 			column: 'unit'
 		});
@@ -175,9 +165,9 @@ describe('tables of units and epochs', () => {
 			{ unit: '1', bundle: 'T01', class: 'principal', amplitudeUv: 120.5, noiseUv: null },
 			{ unit: '2', bundle: null, class: null, amplitudeUv: null, noiseUv: 9 }
 		]);
-		const wrong = refusal(readUnits(pieces('unit,class\n1,pyramid\n')));
+		const wrong = tableRefusal(readUnits(pieces('unit,class\n1,pyramid\n')));
 		expect(await wrong).toMatchObject({ code: 'not-a-kind', row: 2, column: 'class' });
-		const twice = refusal(readUnits(pieces('unit\n1\n1\n')));
+		const twice = tableRefusal(readUnits(pieces('unit\n1\n1\n')));
 		expect(await twice).toMatchObject({ code: 'duplicate', row: 3 });
 	});
 
@@ -187,9 +177,9 @@ describe('tables of units and epochs', () => {
 			{ name: 'run1', kind: 'run', startS: 0, stopS: 10 },
 			{ name: 'nap, box', kind: 'rest', startS: 10, stopS: 20.5 }
 		]);
-		const kind = refusal(readEpochs(pieces('name,kind,start_s,stop_s\na,walk,0,1\n')));
+		const kind = tableRefusal(readEpochs(pieces('name,kind,start_s,stop_s\na,walk,0,1\n')));
 		expect(await kind).toMatchObject({ code: 'not-a-kind', row: 2, column: 'kind' });
-		const time = refusal(readEpochs(pieces('name,kind,start_s,stop_s\na,run,5,5\n')));
+		const time = tableRefusal(readEpochs(pieces('name,kind,start_s,stop_s\na,run,5,5\n')));
 		expect(await time).toMatchObject({ code: 'time-order', row: 2, column: 'stop_s' });
 	});
 });
