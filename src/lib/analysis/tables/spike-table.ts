@@ -109,9 +109,10 @@ function isSorted(times: Float64Array): boolean {
 	return true;
 }
 
+/** Made once: `localeCompare` with options makes one for every pair. */
+const ORDER = new Intl.Collator('en', { numeric: true, sensitivity: 'variant' });
+
 /** Order of units: by label, numbers by value, then by bundle. */
 export function byLabel(a: UnitInput, b: UnitInput): number {
-	const compare = (x: string, y: string) =>
-		x.localeCompare(y, 'en', { numeric: true, sensitivity: 'variant' });
-	return compare(a.unit, b.unit) || compare(a.bundle ?? '', b.bundle ?? '');
+	return ORDER.compare(a.unit, b.unit) || ORDER.compare(a.bundle ?? '', b.bundle ?? '');
 }
