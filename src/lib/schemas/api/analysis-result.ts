@@ -60,7 +60,7 @@ const qualitySchema = z
 		type: z.enum(['principal', 'interneuron', 'unclear']).nullable()
 	})
 	.optional()
-	.meta({ description: 'Absent from results made before version 0.2.' });
+	.meta({ description: 'Absent from results of an analysis before 1.1.0.' });
 
 const unitSchema = z.object({
 	unit: z.string(),
