@@ -13,14 +13,14 @@ import { SIZES } from './bench/sizes';
 import { tableStep } from './bench/table-step';
 import { writeTables } from './bench/write-tables';
 
-/** Unmeasured runs before the last unmeasured one. */
-const WARMING = 2;
+/** Every step runs unmeasured for as long as this, and at least twice: code is compiled as it runs. */
+const WARMING_MS = 1500;
 /** With fewer spikes than this only the shifts are worth a second thread. */
 const SHORT = 300_000;
 
 /**
  * `npm run bench`: seconds for each step of the numeric core on simulated days, one line of JSON a
- * step. Every step runs three times unmeasured and then as often as asked for.
+ * step. Every step is warmed up first and then as often as asked for.
  */
 export default async function bench(args: string[]): Promise<number> {
 	const { sizes, steps, repetitions, threads, seed } = readBenchOptions(args);
@@ -33,7 +33,7 @@ export default async function bench(args: string[]): Promise<number> {
 				const isShort = day.spikeS.length < SHORT && step !== 'shifts';
 				const workers = isShort ? crewOfOne(day) : crew;
 				const run = await prepared(step, workers, day, folder);
-				for (let k = 0; k < WARMING; k++) await run();
+				for (const end = performance.now() + WARMING_MS; performance.now() < end;) await run();
 				const told = await run();
 				const wall: number[] = [];
 				const cpu: number[] = [];

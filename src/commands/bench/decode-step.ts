@@ -7,7 +7,7 @@ import {
 } from '../../lib/analysis/decoding/quick-decoder';
 import { median } from '../../lib/analysis/statistics/quantile';
 import type { Crew } from './crew';
-import { binsOfSamples, centresOf, share, smootherOfSize } from './ground';
+import { binsOfSamples, centresOf, share, smootherOfSize, spikesOfDay } from './ground';
 import type { BenchDay } from './simulate-day';
 
 const FOLDS = 10;
@@ -19,7 +19,7 @@ function planned(day: BenchDay, windowS: number): QuickDay {
 		tS,
 		bin: binsOfSamples(day),
 		sampleS: 1 / size.hz,
-		spikes: { timeS: day.spikeS, unit: day.spikeUnit, units: size.units },
+		spikes: spikesOfDay(day),
 		smooth: smootherOfSize(size),
 		centreXCm: centre.xCm,
 		centreYCm: centre.yCm,
@@ -62,7 +62,7 @@ export async function decodeStep(
 	day: BenchDay,
 	windowS: number
 ): Promise<{ medianErrorCm: number }> {
-	const room = quickRoom(planned(day, windowS));
+	const room = quickRoom({ smooth: smootherOfSize(day.size), spikes: spikesOfDay(day) });
 	const counts = Array.from(
 		{ length: crew.threads },
 		() => new Int32Array(new SharedArrayBuffer(4 * room))

@@ -2,6 +2,7 @@ import { gaussianKernel } from '../../lib/analysis/maps/gaussian-kernel';
 import type { Separable } from '../../lib/analysis/maps/separable';
 import { gridSmoother, lineSmoother } from '../../lib/analysis/maps/smooth-line';
 import type { Smoother } from '../../lib/analysis/maps/smoother';
+import type { TimedSpikes } from '../../lib/analysis/spikes/timed-spikes';
 import type { BenchDay } from './simulate-day';
 import type { DaySize } from './sizes';
 
@@ -19,6 +20,11 @@ export function binsOfSamples({ size, xCm, yCm }: BenchDay): Int32Array {
 		out[i] = clip(yCm[i] / high, binsY) * binsX + clip(xCm[i] / wide, binsX);
 	}
 	return out;
+}
+
+/** The spikes of a day, all units on one list. */
+export function spikesOfDay({ spikeS, spikeUnit, size }: BenchDay): TimedSpikes {
+	return { timeS: spikeS, unit: spikeUnit, units: size.units };
 }
 
 /** Gaussian over bins, nothing beyond the edges. */

@@ -7,7 +7,7 @@ import {
 } from '../../lib/analysis/maps/half-maps';
 import { median } from '../../lib/analysis/statistics/quantile';
 import type { Crew } from './crew';
-import { binsOfSamples, share, smootherOfSize } from './ground';
+import { binsOfSamples, share, smootherOfSize, spikesOfDay } from './ground';
 import type { BenchDay } from './simulate-day';
 
 function halved(day: BenchDay): HalvedDay {
@@ -15,7 +15,7 @@ function halved(day: BenchDay): HalvedDay {
 		tS: day.tS,
 		bin: binsOfSamples(day),
 		sampleS: 1 / day.size.hz,
-		spikes: { timeS: day.spikeS, unit: day.spikeUnit, units: day.size.units },
+		spikes: spikesOfDay(day),
 		smooth: smootherOfSize(day.size),
 		blockS: 30,
 		leastHz: 1e-3
@@ -47,7 +47,7 @@ export function drawMaps(day: BenchDay, { from, to, counts }: DrawMapsInput): Ha
 
 /** Rate maps of all units, and how alike the maps of even and odd 30 s blocks are. */
 export async function mapStep(crew: Crew, day: BenchDay): Promise<{ splitHalfMedian: number }> {
-	const room = halfRoom(halved(day));
+	const room = halfRoom({ smooth: smootherOfSize(day.size), spikes: spikesOfDay(day) });
 	const counts = Array.from(
 		{ length: crew.threads },
 		() => new Int32Array(new SharedArrayBuffer(4 * room))

@@ -3,7 +3,7 @@ import { shiftedRawInformation } from '../../lib/analysis/maps/shifted-raw-infor
 import { median } from '../../lib/analysis/statistics/quantile';
 import { samplesByUnit } from '../../lib/analysis/spikes/samples-by-unit';
 import type { Crew } from './crew';
-import { binsOfSamples, share } from './ground';
+import { binsOfSamples, share, spikesOfDay } from './ground';
 import type { BenchDay } from './simulate-day';
 
 const SHIFTS = 500;
@@ -33,8 +33,7 @@ export function shiftUnits(day: BenchDay, { from, to }: ShiftInput): ShiftOutput
 	const shifts = Int32Array.from({ length: SHIFTS + 1 }, (_, k) =>
 		k === 0 ? 0 : least + (((k - 1) * 2654435761) % (tS.length - 2 * least))
 	);
-	const spikes = { timeS: day.spikeS, unit: day.spikeUnit, units: size.units };
-	const cells = samplesByUnit(spikes, tS, from, to);
+	const cells = samplesByUnit(spikesOfDay(day), tS, from, to);
 	const most = cells.reduce((top, { length }) => Math.max(top, length), 0);
 	const figures = shiftedRawInformation({ binTwice }, shifts, occupancyS, most);
 	const bits = new Float64Array(cells.length);

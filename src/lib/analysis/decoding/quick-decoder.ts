@@ -35,7 +35,7 @@ const BLOCK = 512;
 const NOWHERE = -1e30;
 
 /** How many numbers counts of [bin][unit] are. */
-export function quickRoom({ smooth, spikes }: QuickDay): number {
+export function quickRoom({ smooth, spikes }: Pick<QuickDay, 'smooth' | 'spikes'>): number {
 	return smooth.separable.binsX * smooth.separable.binsY * unitRoom(spikes.units);
 }
 

@@ -21,7 +21,7 @@ export interface HalvedDay {
 }
 
 /** How many numbers counts of [half][bin][unit] are. */
-export function halfRoom(day: HalvedDay): number {
+export function halfRoom(day: Pick<HalvedDay, 'smooth' | 'spikes'>): number {
 	return 2 * binsOf(day) * unitRoom(day.spikes.units);
 }
 
@@ -133,6 +133,6 @@ function sumInto(
 	}
 }
 
-function binsOf({ smooth }: HalvedDay): number {
+function binsOf({ smooth }: Pick<HalvedDay, 'smooth'>): number {
 	return smooth.separable.binsX * smooth.separable.binsY;
 }
