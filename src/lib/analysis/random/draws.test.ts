@@ -15,12 +15,18 @@ it('draws normal numbers whose distribution function is the normal one', () => {
 
 it('draws binomial counts with the chances of the distribution, the certain ones too', () => {
 	const random = seeded(13);
-	const seen = new Float64Array(6);
-	for (let i = 0; i < 20_000; i++) seen[drawBinomial(5, 0.3, random)]++;
-	seen.forEach((n, k) => {
-		const p = Math.exp(binomialLogPmf(k, 5, 0.3));
-		expect(Math.abs(n - 20_000 * p)).toBeLessThan(4 * Math.sqrt(20_000 * p * (1 - p)));
-	});
+	for (const [trials, chance] of [
+		[5, 0.3],
+		[6, 0.8],
+		[700, 0.02]
+	]) {
+		const seen = new Float64Array(trials + 1);
+		for (let i = 0; i < 20_000; i++) seen[drawBinomial(trials, chance, random)]++;
+		seen.forEach((n, k) => {
+			const p = Math.exp(binomialLogPmf(k, trials, chance));
+			expect(Math.abs(n - 20_000 * p)).toBeLessThan(4.5 * Math.sqrt(20_000 * p * (1 - p)) + 1);
+		});
+	}
 	expect([drawBinomial(7, 0, random), drawBinomial(7, 1, random)]).toEqual([0, 7]);
 	expect(drawBinomial(0, 0.5, random)).toBe(0);
 });
