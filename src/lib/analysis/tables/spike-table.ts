@@ -70,7 +70,11 @@ function fromColumns(units: Float64Array, timesS: Float64Array): SpikeTable {
 	return grouped(timesS, ids, [...known.keys()].map(String), null, []);
 }
 
-/** A unit label that occurs in several bundles means as many units: many labs number per bundle. */
+/**
+ * A unit label that occurs in several bundles means as many units: many labs number per bundle.
+ * Tables of 100 MB pass here inside a server: `unit` is used up (its numbers become those of unit and
+ * bundle together), and the units are views of one array.
+ */
 function grouped(
 	timesS: Float64Array,
 	unit: Int32Array,
@@ -79,16 +83,17 @@ function grouped(
 	bundleLabels: readonly string[]
 ): SpikeTable {
 	const perUnit = Math.max(1, bundleLabels.length);
-	const group = bundle ? unit.slice(0, timesS.length) : unit;
-	if (bundle)
-		for (let row = 0; row < group.length; row++) group[row] = group[row] * perUnit + bundle[row];
+	const group = unit;
+	if (bundle) {
+		for (let row = 0; row < timesS.length; row++) group[row] = group[row] * perUnit + bundle[row];
+	}
 	const first = new Int32Array(unitLabels.length * perUnit + 1);
 	for (let row = 0; row < timesS.length; row++) first[group[row] + 1]++;
 	for (let g = 1; g < first.length; g++) first[g] += first[g - 1];
 	const next = first.slice();
 	const flat = new Float64Array(timesS.length);
 	for (let row = 0; row < timesS.length; row++) flat[next[group[row]]++] = timesS[row];
-	const sorted = Array.from(first.subarray(1), (end, g) => flat.slice(first[g], end));
+	const sorted = Array.from(first.subarray(1), (end, g) => flat.subarray(first[g], end));
 	const units = sorted.flatMap((times, g): UnitInput[] => {
 		if (times.length === 0) return [];
 		if (!isSorted(times)) times.sort();
