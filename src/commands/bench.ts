@@ -15,12 +15,18 @@ import { writeTables } from './bench/write-tables';
 
 /** Every step runs unmeasured for as long as this, and at least twice: code is compiled as it runs. */
 const WARMING_MS = 1500;
-/** With fewer spikes than this only the shifts are worth a second thread. */
-const SHORT = 300_000;
+/** Spikes from which on a step is worth a second thread; below, handing over costs more. */
+const WORTH_SHARING: Record<StepName, number> = {
+	csv: 300_000,
+	maps: 3_000_000,
+	shifts: 0,
+	'decode-100': 300_000,
+	'decode-250': 300_000
+};
 
 /**
  * `npm run bench`: seconds for each step of the numeric core on simulated days, one line of JSON a
- * step. Every step is warmed up first and then as often as asked for.
+ * step. Every step is warmed up and then timed as often as asked for.
  */
 export default async function bench(args: string[]): Promise<number> {
 	const { sizes, steps, repetitions, threads, seed } = readBenchOptions(args);
@@ -30,7 +36,7 @@ export default async function bench(args: string[]): Promise<number> {
 			const day = simulateDay(SIZES[size], seed);
 			const crew = startCrew(threads, day);
 			for (const step of steps) {
-				const isShort = day.spikeS.length < SHORT && step !== 'shifts';
+				const isShort = day.spikeS.length < WORTH_SHARING[step];
 				const workers = isShort ? crewOfOne(day) : crew;
 				const run = await prepared(step, workers, day, folder);
 				for (const end = performance.now() + WARMING_MS; performance.now() < end;) await run();
