@@ -1,6 +1,5 @@
 import betainc from '@stdlib/math-base-special-betainc';
 import gammaln from '@stdlib/math-base-special-gammaln';
-import { smallestCount } from './smallest-count';
 
 /**
  * ln P(X = k) of a binomial count; −∞ where k cannot occur.
@@ -34,16 +33,6 @@ export function binomialAtLeast(k: number, trials: number, chance: number): numb
 	if (whole <= 0) return 1;
 	if (whole > trials) return 0;
 	return betainc(chance, whole, trials - whole + 1);
-}
-
-/**
- * Smallest k with P(X ≤ k) ≥ p.
- * @throws RangeError p outside [0, 1], trials or chance out of range
- */
-export function binomialQuantile(p: number, trials: number, chance: number): number {
-	demand(trials, chance);
-	if (!(p >= 0 && p <= 1)) throw new RangeError(`probability ${p} is outside 0 to 1`);
-	return smallestCount((k) => binomialAtMost(k, trials, chance) >= p);
 }
 
 function demand(trials: number, chance: number): void {

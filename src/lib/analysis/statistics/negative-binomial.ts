@@ -1,6 +1,5 @@
 import betainc from '@stdlib/math-base-special-betainc';
 import gammaln from '@stdlib/math-base-special-gammaln';
-import { smallestCount } from './smallest-count';
 
 /**
  * ln P(X = k) of a negative binomial count with mean μ and size r: variance μ + μ²/r.
@@ -31,17 +30,6 @@ export function negativeBinomialAtLeast(k: number, mean: number, size: number): 
 	demand(mean, size);
 	const whole = Math.ceil(k);
 	return whole <= 0 ? 1 : betainc(mean / (size + mean), whole, size);
-}
-
-/**
- * Smallest k with P(X ≤ k) ≥ p; ∞ at p = 1 unless the mean is 0.
- * @throws RangeError p outside [0, 1], mean negative, size not above 0
- */
-export function negativeBinomialQuantile(p: number, mean: number, size: number): number {
-	demand(mean, size);
-	if (!(p >= 0 && p <= 1)) throw new RangeError(`probability ${p} is outside 0 to 1`);
-	if (p === 1 && mean > 0) return Infinity;
-	return smallestCount((k) => negativeBinomialAtMost(k, mean, size) >= p);
 }
 
 function demand(mean: number, size: number): void {

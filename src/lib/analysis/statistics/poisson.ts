@@ -1,6 +1,5 @@
 import gammainc from '@stdlib/math-base-special-gammainc';
 import gammaln from '@stdlib/math-base-special-gammaln';
-import { smallestCount } from './smallest-count';
 
 /**
  * ln P(X = k) of a Poisson count; −∞ where k cannot occur.
@@ -28,17 +27,6 @@ export function poissonAtLeast(k: number, mean: number): number {
 	const whole = Math.ceil(k);
 	if (whole <= 0 || mean === 0) return whole <= 0 ? 1 : 0;
 	return gammainc(mean, whole);
-}
-
-/**
- * Smallest k with P(X ≤ k) ≥ p; ∞ at p = 1 unless the mean is 0.
- * @throws RangeError p outside [0, 1], mean negative or not finite
- */
-export function poissonQuantile(p: number, mean: number): number {
-	demandMean(mean);
-	if (!(p >= 0 && p <= 1)) throw new RangeError(`probability ${p} is outside 0 to 1`);
-	if (p === 1 && mean > 0) return Infinity;
-	return smallestCount((k) => poissonAtMost(k, mean) >= p);
 }
 
 function demandMean(mean: number): void {
