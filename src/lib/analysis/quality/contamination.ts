@@ -1,4 +1,4 @@
-import { countInterval } from '../trends/count-interval';
+import { countInterval } from '../statistics/count-interval';
 
 /** What was counted of a unit. */
 export interface ViolationCount {

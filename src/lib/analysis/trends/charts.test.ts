@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { referenceCase, worstDifference } from '../../../../tests/factories/reference';
-import { countInterval } from './count-interval';
+import { countInterval } from '../statistics/count-interval';
 import { countLimits } from './count-limits';
 import { cusumChart } from './cusum-chart';
 import { dispersion } from './dispersion';

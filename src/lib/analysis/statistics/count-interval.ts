@@ -1,4 +1,4 @@
-import { chiSquaredQuantile } from '../statistics/chi-squared';
+import { chiSquaredQuantile } from './chi-squared';
 
 /**
  * Exact limits of a Poisson mean when n was counted (Garwood 1936): ½ χ²(2n) and ½ χ²(2n + 2); the
