@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { referenceCase } from '../../../../tests/factories/reference';
+import { referenceCase, worstDifference } from '../../../../tests/factories/reference';
 import { reliability, spearmanBrown } from './reliability';
 
 describe('spearmanBrown', () => {
@@ -9,6 +9,14 @@ describe('spearmanBrown', () => {
 			'e2'
 		);
 		expect(Math.abs(spearmanBrown(input['half r']) - expected.full)).toBeLessThan(tol);
+	});
+
+	it('equals the listed values (numpy)', () => {
+		const { input, expected } = referenceCase<{ halfR: number[] }, { fullR: number[] }>(
+			'11_stability.json',
+			'spearman_brown'
+		);
+		expect(worstDifference(input.halfR.map(spearmanBrown), expected.fullR)).toBeLessThan(1e-12);
 	});
 
 	it('keeps 0 and 1, rises throughout and never leaves −1 to 1', () => {

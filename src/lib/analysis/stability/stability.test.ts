@@ -10,7 +10,6 @@ import { mean } from '../statistics/mean';
 import { byLag } from './by-lag';
 import { compareDays } from './compare-days';
 import { meanOfTrueMatches, meanWithFalseMatches } from './false-matches';
-import { fullLengthReliability } from './full-length-reliability';
 import { mapCorrelation } from './map-correlation';
 import { matchMaps, rowAt, type DayMaps } from './matched-maps';
 import { drawPairings, pairingNull } from './pairing-null';
@@ -199,19 +198,6 @@ describe('rateChange', () => {
 		expect(rateChange(0, 2)).toEqual({ change: 1, overlap: 0 });
 		expect(rateChange(0, 0)).toEqual({ change: NaN, overlap: NaN });
 		expect(() => rateChange(-1, 2)).toThrow(RangeError);
-	});
-});
-
-describe('fullLengthReliability', () => {
-	it('is 0.75 for halves of 0.6, and equals the listed values (Spearman and Brown)', () => {
-		expect(fullLengthReliability(0.6)).toBeCloseTo(0.75, 12);
-		const listed = referenceCase<{ halfR: number[] }, { fullR: number[] }>(
-			'11_stability.json',
-			'spearman_brown'
-		);
-		const got = listed.input.halfR.map(fullLengthReliability);
-		expect(worstDifference(got, listed.expected.fullR)).toBeLessThan(1e-12);
-		expect(fullLengthReliability(-1)).toBeNaN();
 	});
 });
 
