@@ -22,13 +22,15 @@ const PULL = 1;
 
 /** Pairs outside this range of probability are beyond doubt. */
 const DOUBT = [0.02, 0.98] as const;
+/** A smaller factor would turn evidence into none. */
+const LEAST_TEMPER = 0.1;
 /** With fewer doubtful pairs all pairs teach. */
 const LEAST_PAIRS = 50;
 
 /**
  * Logistic regression of the label on the score, the prior's log odds taken as known: slope and
  * intercept of `matchProbability`. Features are correlated and none is quite normal, so scores
- * cannot be taken at their word.
+ * cannot be taken at their word. Then one factor on the whole log odds, prior included: the temper.
  *
  * Only pairs in doubt under `start` teach, where the decisions are: the many that are sure either way
  * would bend the line to tails that change none. Choosing by score alone leaves the line unbiased.
@@ -50,7 +52,33 @@ export function fitCalibration(
 		const p = matchProbability(scores[k], priors[k], start);
 		return p > DOUBT[0] && p < DOUBT[1];
 	});
-	return fitLine(pairs, doubtful.length >= LEAST_PAIRS ? doubtful : all);
+	const taught = doubtful.length >= LEAST_PAIRS ? doubtful : all;
+	const line = fitLine(pairs, taught);
+	return { ...line, temper: fitTemper(pairs, taught, line) };
+}
+
+/** The factor on the log odds under a line that makes the labels most likely, pulled towards 1. */
+function fitTemper(
+	{ scores, priors, isSame }: LabelledPairs,
+	taught: readonly number[],
+	{ slope, intercept }: Calibration
+): number {
+	let temper = 1;
+	for (let step = 0; step < MOST_STEPS; step++) {
+		let toTemper = PULL * (1 - temper);
+		let curvature = PULL;
+		for (const k of taught) {
+			const odds = slope * scores[k] + intercept + logOdds(priors[k]);
+			if (!Number.isFinite(odds)) continue;
+			const p = logistic(temper * odds);
+			toTemper += (isSame[k] - p) * odds;
+			curvature += p * (1 - p) * odds * odds;
+		}
+		const by = Math.max(-0.5, Math.min(0.5, toTemper / curvature));
+		temper = Math.max(LEAST_TEMPER, temper + by);
+		if (Math.abs(by) < 1e-10) break;
+	}
+	return temper;
 }
 
 function fitLine(

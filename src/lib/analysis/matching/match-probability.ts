@@ -1,7 +1,12 @@
-/** Straight line from a score to calibrated log odds. */
+/** Straight line from a score to calibrated log odds, and how far the answer is then believed. */
 export interface Calibration {
 	readonly slope: number;
 	readonly intercept: number;
+	/**
+	 * Factor on the log odds of the answer, prior included; 1 when left out. Priors that take rivals into
+	 * account are sure too early, since each pair's evidence comes back to it through its rivals.
+	 */
+	readonly temper?: number;
 }
 
 /** Takes the score at its word. */
@@ -18,7 +23,8 @@ export function logistic(x: number): number {
 }
 
 /**
- * Probability that a pair is one cell: 1/(1 + exp(−(S′ + ln(π/(1 − π))))), S′ = slope · S + intercept.
+ * Probability that a pair is one cell: 1/(1 + exp(−t (S′ + ln(π/(1 − π))))), S′ = slope · S + intercept,
+ * t the temper.
  * @param score see `matchScore`
  * @param prior π, for example expected survival over the number of candidates
  * @throws RangeError prior outside [0, 1]
@@ -26,8 +32,8 @@ export function logistic(x: number): number {
 export function matchProbability(
 	score: number,
 	prior: number,
-	{ slope, intercept }: Calibration = UNCALIBRATED
+	{ slope, intercept, temper = 1 }: Calibration = UNCALIBRATED
 ): number {
 	if (!(prior >= 0 && prior <= 1)) throw new RangeError(`prior ${prior} is outside 0 to 1`);
-	return logistic(slope * score + intercept + logOdds(prior));
+	return logistic(temper * (slope * score + intercept + logOdds(prior)));
 }

@@ -29,7 +29,11 @@ export interface MatchRule {
  * Fitted to simulated tetrodes with the starting laws (`npm run proof -- unit-matching`). No pairs of a
  * real recording stand behind it: a lab that has decided some fifty fits its own.
  */
-export const SIMULATED_CALIBRATION: Calibration = { slope: 0.9, intercept: -1.6 };
+export const SIMULATED_CALIBRATION: Calibration = {
+	slope: 0.9,
+	intercept: -1.6,
+	temper: 0.9
+};
 
 /** Where a lab begins. */
 export const MATCH_RULE: MatchRule = {

@@ -152,6 +152,28 @@ describe('fitCalibration', () => {
 		const got = fitCalibration(labelled(20000, 0.6, -0.8, 3));
 		expect(Math.abs(got.slope - 0.6)).toBeLessThan(0.05);
 		expect(Math.abs(got.intercept + 0.8)).toBeLessThan(0.1);
+		// Labels that follow the line need no tempering.
+		expect(Math.abs((got.temper ?? NaN) - 1)).toBeLessThan(0.03);
+	});
+
+	it('tempers answers that are too sure of their priors', () => {
+		const { scores, priors } = labelled(20000, 1, 0, 4);
+		const random = seeded(5);
+		const isSame = Uint8Array.from(scores, (score, k) =>
+			random.next() < matchProbability(score, priors[k], { slope: 1, intercept: 0, temper: 0.7 })
+				? 1
+				: 0
+		);
+		const surer = priors.map((prior) => prior ** 2 / (prior ** 2 + (1 - prior) ** 2));
+		const got = fitCalibration({ scores, priors: surer, isSame });
+		expect(got.temper).toBeLessThan(0.95);
+	});
+
+	it('takes the temper as a factor on the log odds (hand-worked)', () => {
+		// Odds of 4 become √4 = 2 at a temper of ½.
+		const half = { slope: 1, intercept: 0, temper: 0.5 };
+		expect(matchProbability(0, 0.8, half)).toBeCloseTo(2 / 3, 12);
+		expect(matchProbability(0, 0.5, half)).toBe(0.5);
 	});
 
 	it('stays finite when scores divide the labels without a mistake, and plain without pairs', () => {
@@ -162,7 +184,7 @@ describe('fitCalibration', () => {
 		expect(got.slope).toBeLessThan(4);
 		const none = new Float64Array(0);
 		const plain = fitCalibration({ scores: none, priors: none, isSame: new Uint8Array(0) });
-		expect(plain).toEqual({ slope: 1, intercept: 0 });
+		expect(plain).toEqual({ slope: 1, intercept: 0, temper: 1 });
 	});
 
 	it('refuses labels that do not fit the scores', () => {
