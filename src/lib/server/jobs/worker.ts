@@ -6,6 +6,7 @@ import { wakeForgotten } from '$lib/server/services/outbox';
 import { settings } from '$lib/server/settings';
 import { closeQueue } from './enqueue';
 import { handlers, type JobContext } from './handlers';
+import { queueConnection } from './queue-connection';
 import { jobData, queueNames, type QueueName } from './queues';
 import { closeThreads } from './threads';
 import { holdWorkerLock } from './worker-lock';
@@ -32,10 +33,9 @@ export async function startWorker(): Promise<Worker> {
 	const lock = await holdWorkerLock();
 	const running = new Set<string>();
 	const abort = new AbortController();
+	const connection = queueConnection(complain('queue'));
 	const boss = new PgBoss({
-		connectionString: settings().databaseUrl,
-		application_name: 'quarterturn-worker',
-		max: 4,
+		db: connection,
 		migrate: false,
 		schedule: false,
 		supervise: true
@@ -48,6 +48,7 @@ export async function startWorker(): Promise<Worker> {
 		}
 	} catch (fault) {
 		await boss.stop({ graceful: false }).catch(complain('queue'));
+		await connection.close();
 		await lock.release();
 		throw fault;
 	}
@@ -68,6 +69,7 @@ export async function startWorker(): Promise<Worker> {
 			const cut = setTimeout(() => abort.abort(), GRACE_MS);
 			await boss.stop({ graceful: true, wait: true, timeout: GRACE_MS + 5000 });
 			clearTimeout(cut);
+			await connection.close();
 			await closeThreads();
 			await closeTransport();
 			await lock.release();
