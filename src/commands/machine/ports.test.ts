@@ -16,7 +16,13 @@ function occupy(port: number, host: string): Promise<number> {
 	});
 }
 
+const OUTGOING_FROM = 32_768;
+
 describe('ports', () => {
+	it('picks a free port that no outgoing connection is given', async () => {
+		for (let k = 0; k < 20; k++) expect(await anyFreePort()).toBeLessThan(OUTGOING_FROM);
+	});
+
 	it('sees a port as taken while somebody listens on it and free afterwards', async () => {
 		const port = await occupy(await anyFreePort(), '127.0.0.1');
 		expect(await isPortFree(port)).toBe(false);

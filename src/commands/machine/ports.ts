@@ -14,17 +14,18 @@ export async function firstFreePort(from: number, hosts?: string[]): Promise<num
 	throw new Error(`No free port from ${from} upward`);
 }
 
-/** A port nobody uses now, picked by the system. */
-export function anyFreePort(): Promise<number> {
-	return new Promise((resolve, reject) => {
-		const server = createServer();
-		server.once('error', reject);
-		server.listen(0, '127.0.0.1', () => {
-			const address = server.address();
-			const port = typeof address === 'object' && address ? address.port : 0;
-			server.close(() => resolve(port));
-		});
-	});
+/**
+ * Where free ports are looked for: below those that systems hand to outgoing connections (32768 and up
+ * on Linux, 49152 by RFC 6335), one of which could take the port while a killed server starts again.
+ */
+const PICKED = { from: 20_000, to: 32_768 };
+
+/** A port nobody uses now, anywhere in the range, so that programs that start together seldom meet. */
+export async function anyFreePort(): Promise<number> {
+	for (;;) {
+		const port = PICKED.from + Math.floor((PICKED.to - PICKED.from) * Math.random());
+		if (await isPortFree(port)) return port;
+	}
 }
 
 function canListen(port: number, host: string): Promise<boolean> {

@@ -18,6 +18,12 @@ describe('the queue’s connection', () => {
 		expect((await answer).rows[0].seven).toBe(7);
 	});
 
+	it('lets a report come to nothing after it was closed', async () => {
+		const closed = queueConnection(() => undefined);
+		await closed.close();
+		expect((await closed.executeSql('SELECT 1')).rows).toEqual([]);
+	});
+
 	it('says at once what the database refuses', async () => {
 		await expect(queue.executeSql('SELECT nothing FROM nowhere')).rejects.toThrow('nowhere');
 	});

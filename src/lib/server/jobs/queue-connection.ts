@@ -11,7 +11,7 @@ const LOST_BY_SYSTEM = new Set(['ECONNRESET', 'ECONNREFUSED', 'EPIPE', 'ETIMEDOU
 
 export interface QueueConnection {
 	/** What pg-boss asks for in place of a pool of its own. */
-	executeSql(text: string, values?: unknown[]): Promise<pg.QueryResult>;
+	executeSql(text: string, values?: unknown[]): Promise<Pick<pg.QueryResult, 'rows' | 'rowCount'>>;
 	close(): Promise<void>;
 }
 
@@ -29,9 +29,11 @@ export function queueConnection(onError: (fault: unknown) => void): QueueConnect
 		max: 4
 	});
 	pool.on('error', onError);
+	let isOpen = true;
 	return {
 		async executeSql(text, values) {
-			for (let tried = 0; ; tried++) {
+			// A job that was laid down at the stop still reports; its queue has handed it on.
+			for (let tried = 0; isOpen; tried++) {
 				try {
 					return await pool.query(text, values);
 				} catch (fault) {
@@ -39,8 +41,12 @@ export function queueConnection(onError: (fault: unknown) => void): QueueConnect
 					await sleep(PAUSES_MS[tried]);
 				}
 			}
+			return { rows: [], rowCount: 0 };
 		},
-		close: () => pool.end()
+		close() {
+			isOpen = false;
+			return pool.end();
+		}
 	};
 }
 
